@@ -12,6 +12,12 @@ public sealed record Reading
     /// <summary>Board time at the middle of its points, microseconds.</summary>
     public required long BoardTimeUs { get; init; }
 
+    /// <summary>The host's monotonic clock when it was complete, seconds from an arbitrary zero; NaN where unknown.</summary>
+    public double MonotonicS { get; init; } = double.NaN;
+
+    /// <summary>Temperature of the coil or its room by the box's thermistor, degrees Celsius; NaN where there is none.</summary>
+    public double TemperatureC { get; init; } = double.NaN;
+
     /// <summary>How long the box worked on it, seconds of board time, the looks and the survey included.</summary>
     public required double BoardSeconds { get; init; }
 
