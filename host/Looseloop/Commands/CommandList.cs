@@ -1,0 +1,13 @@
+using System.CommandLine;
+using Looseloop.Terminal;
+
+namespace Looseloop.Commands;
+
+/// <summary>The commands, in the order of the help.</summary>
+internal static class CommandList
+{
+    public static IEnumerable<Command> Create(Shell shell)
+    {
+        yield return BoxesCommand.Create(shell);
+    }
+}
