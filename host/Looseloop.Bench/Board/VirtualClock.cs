@@ -3,7 +3,7 @@ namespace Looseloop.Bench;
 /// <summary>The bench's own time. It moves only when somebody moves it; timers on it are not supported.</summary>
 public sealed class VirtualClock : TimeProvider
 {
-    private static readonly DateTimeOffset Begin = new(2026, 1, 1, 12, 0, 0, TimeSpan.Zero);
+    private static readonly DateTimeOffset _begin = new(2026, 1, 1, 12, 0, 0, TimeSpan.Zero);
 
     private double _seconds;
 
@@ -14,7 +14,7 @@ public sealed class VirtualClock : TimeProvider
 
     public override long GetTimestamp() => (long)(_seconds * 1e9);
 
-    public override DateTimeOffset GetUtcNow() => Begin + TimeSpan.FromTicks((long)(_seconds * TimeSpan.TicksPerSecond));
+    public override DateTimeOffset GetUtcNow() => _begin + TimeSpan.FromTicks((long)(_seconds * TimeSpan.TicksPerSecond));
 
     /// <summary>Moves on.</summary>
     public void Advance(double seconds) => _seconds += seconds;

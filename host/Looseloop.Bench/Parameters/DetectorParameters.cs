@@ -12,7 +12,7 @@ public sealed record DetectorParameters
     public double DecayUs { get; init; } = 400;
 
     /// <summary>Gain from its level to its output, for the linear kinds.</summary>
-    public double Gain { get; init; } = 3;
+    public double Gain { get; init; } = 5;
 
     /// <summary>Output of the logarithmic kinds, millivolts for each decibel.</summary>
     public double MvPerDb { get; init; } = 25;

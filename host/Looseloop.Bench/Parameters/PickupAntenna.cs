@@ -10,7 +10,7 @@ public sealed record PickupAntenna
     public double InputPf { get; init; } = 12;
 
     /// <summary>Gain of the buffer, from antenna to detector.</summary>
-    public double Gain { get; init; } = 10;
+    public double Gain { get; init; } = 25;
 
     /// <summary>Capacitance added to the coil for each picofarad of coupling.</summary>
     public double PullPfPerPf { get; init; } = 1;
