@@ -160,6 +160,9 @@ public sealed class BoxSession : IDisposable
         }
     }
 
+    /// <summary>Lets time pass on the box's clock.</summary>
+    public void Pause(TimeSpan duration) => _channel.Link.Pause(duration);
+
     /// <summary>Stops whatever the box is doing. Never throws for a box that does not answer: its own silence stop will act.</summary>
     public void Halt()
     {

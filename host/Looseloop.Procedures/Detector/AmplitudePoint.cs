@@ -40,8 +40,8 @@ public sealed class AmplitudeMaker
         double own = sampleVariance ?? raw.SampleVariance;
         double variance = Math.Max(double.IsNaN(own) ? SampleStatistics.QuantisationVariance : own, SampleStatistics.QuantisationVariance);
 
-        // Rounding does not average out when the scatter is small: keep a floor of a tenth of a count on the mean.
-        double meanVariance = (variance / raw.Samples) + 0.01;
+        // Rounding averages out only where the scatter is at least half a count (Widrow and Kollar, Quantization Noise, 2008).
+        double meanVariance = (variance / raw.Samples) + (variance < 0.3 ? SampleStatistics.QuantisationVariance : 0);
         return new AmplitudePoint(raw, amplitude, slope * slope * meanVariance);
     }
 }

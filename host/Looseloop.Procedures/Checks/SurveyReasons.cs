@@ -1,0 +1,65 @@
+using Looseloop.Procedures.Read;
+using Looseloop.Procedures.Survey;
+using Looseloop.Readings;
+
+namespace Looseloop.Procedures.Checks;
+
+/// <summary>What a survey holds against a reading.</summary>
+public static class SurveyReasons
+{
+    /// <summary>Why a survey found no f0.</summary>
+    public static IReadOnlyList<Reason> WhyNoF0(SurveyResult survey, ReadOptions options)
+    {
+        string range = $"{options.LowHz / 1000:0.#} to {options.HighHz / 1000:0.#} kHz";
+        var reasons = survey.Responses.Where(response => response.Kind == ResponseKind.Ghost)
+            .Select(ghost => new Reason(
+                ReasonCode.Ghost,
+                $"The response at {ghost.FrequencyHz / 1000:0.0} kHz is caused by the drive's harmonic {ghost.Harmonic}, "
+                + $"from something near {ghost.Harmonic * ghost.FrequencyHz / 1000:0} kHz."))
+            .ToList();
+        if (survey.LargestAtEdge)
+        {
+            reasons.Add(new Reason(ReasonCode.PeakAtEdge, $"The level still rises at the edge of {range}."));
+        }
+
+        if (reasons.Count == 0)
+        {
+            string what = survey.Responses.Count == 0 ? "Nothing stands out" : "Nothing that follows the drive stands out";
+            reasons.Add(new Reason(ReasonCode.NoPeak, $"{what} from {range}."));
+        }
+
+        return reasons;
+    }
+
+    /// <summary>What else answers near f0, or near three times it.</summary>
+    public static IEnumerable<Reason> Near(Measurement measurement)
+    {
+        if (measurement.Survey is not SurveyResult survey)
+        {
+            yield break;
+        }
+
+        double f0 = measurement.Fit.F0Hz;
+        double bandwidth = measurement.Fit.BandwidthHz;
+        foreach (Response response in survey.Responses)
+        {
+            double distance = Math.Abs(response.FrequencyHz - f0);
+            if (response.Kind == ResponseKind.Neighbour && distance < 20 * bandwidth)
+            {
+                yield return new Reason(
+                    ReasonCode.TwoResponses,
+                    $"Another response stands at {response.FrequencyHz / 1000:0.0} kHz, {distance / bandwidth:0.0} bandwidths from f0.");
+            }
+
+            // Its own width is not known; at the drive's third harmonic three bandwidths of f0 are one of an equal Q.
+            bool onThird = Math.Abs(response.FrequencyHz - (3 * f0)) < Math.Max(6 * bandwidth, 0.02 * f0);
+            bool drivesThird = Math.Abs(Math.Sin(3 * Math.PI * measurement.Target.Duty)) > 0.15;
+            if (response.Kind == ResponseKind.Overtone && onThird && drivesThird)
+            {
+                yield return new Reason(
+                    ReasonCode.OvertoneOnThird,
+                    $"An overtone at {response.FrequencyHz / 1000:0.0} kHz answers the drive's third harmonic while f0 is read.");
+            }
+        }
+    }
+}

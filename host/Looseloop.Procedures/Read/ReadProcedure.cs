@@ -1,0 +1,199 @@
+using Looseloop.Box;
+using Looseloop.Procedures.Checks;
+using Looseloop.Procedures.Detector;
+using Looseloop.Procedures.Survey;
+using Looseloop.Procedures.Uncertainty;
+using Looseloop.Readings;
+using Looseloop.Resonance;
+
+namespace Looseloop.Procedures.Read;
+
+/// <summary>
+/// A reading: find the response, get a first idea of f0 and Q, measure there and back, look again at another duty and
+/// after a longer dwell, fit, and judge.
+/// </summary>
+public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch watch, CancellationToken cancel)
+{
+    /// <summary>Long enough for whole periods of 50 and of 60 Hz mains, milliseconds.</summary>
+    private const int DarkMs = 100;
+
+    /// <summary>Ring times until what is left of the own ring is below a thousandth of a count.</summary>
+    private const double RingsToDie = 15;
+
+    /// <summary>Half the span of a quick look about a frequency that was given, as a share of it.</summary>
+    private const double NearShare = 0.05;
+
+    private readonly DetectorScale _scale = new(options.Law);
+
+    /// <summary>Reads.</summary>
+    /// <exception cref="BoxException">The box refused, failed or fell silent.</exception>
+    public ReadOutcome Run()
+    {
+        SurveyResult? survey = null;
+        double aboutHz;
+        DarkLevel look;
+        if (options.NearHz is double near)
+        {
+            (aboutHz, look) = LookNear(near);
+        }
+        else
+        {
+            survey = SurveyProcedure.Run(box, options.Law, options.LowHz, options.HighHz, watch, cancel);
+            look = survey.Look;
+            if (survey.F0 is null)
+            {
+                return Nothing(survey, look, SurveyReasons.WhyNoF0(survey, options), []);
+            }
+
+            aboutHz = survey.F0.FrequencyHz;
+        }
+
+        watch.Begin($"finding the width at {aboutHz / 1000:0.0} kHz", 0.4);
+        var first = new AmplitudeMaker(_scale, look.Mean);
+        TargetSearch.Result search = TargetSearch.Run(box, first, aboutHz, options, cancel);
+        if (search.Target is null)
+        {
+            return Nothing(survey, look, [FitReasons.WhyNot(search.Outcome, search.Saturated)], search.Points);
+        }
+
+        Measurement measurement = Measure(search, survey);
+        return Judge(measurement);
+    }
+
+    /// <summary>A sweep of the settings within 5 % of a frequency: where the largest is, a reading begins.</summary>
+    private (double AboutHz, DarkLevel Look) LookNear(double nearHz)
+    {
+        watch.Begin($"looking about {nearHz / 1000:0.0} kHz", 0.3);
+        (IReadOnlyList<RawPoint> raw, DarkLevel look) = SurveySweep.Run(
+            box, options.Law, Math.Max(nearHz * (1 - NearShare), box.Identity.LowestHz), Math.Min(nearHz * (1 + NearShare), box.Identity.HighestHz),
+            0.5, NoWatch.Instance, cancel);
+        return (raw.Count > 0 ? raw.MaxBy(point => point.Mean).Setting.FrequencyHz : nearHz, look);
+    }
+
+    private Measurement Measure(TargetSearch.Result search, SurveyResult? survey)
+    {
+        Target target = search.Target!;
+        DarkLevel before = QuietDark(target);
+        MeasurePlan plan = MeasurePlan.For(box, target, options.Law, options.MainsHz);
+        double boardSeconds = plan.Settings.Count * 2e-6 * (plan.DwellUs + (plan.Samples * plan.SpacingUs));
+        watch.Begin($"measuring {plan.Settings.Count} settings there and back", boardSeconds * 1.8);
+        SweepResult sweep = box.Sweep(
+            new SweepRequest(plan.Settings, plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs, ThereAndBack = true },
+            cancel: cancel);
+        watch.Begin("looking again at another duty and after a longer dwell", boardSeconds * 0.8);
+        double otherDuty = target.Duty < 0.5 ? Math.Min(target.Duty * 1.5, 0.5) : 1 / 3.0;
+        SweepResult other = box.Sweep(
+            new SweepRequest([.. plan.Settings.Select(s => SettingGrid.WithDuty(s, otherDuty))], plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs },
+            cancel: cancel);
+        Setting[] flanks = Flanks(plan, target);
+        SweepResult longer = box.Sweep(
+            new SweepRequest(flanks, 2 * plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs }, cancel: cancel);
+        DarkLevel after = QuietDark(target);
+
+        var maker = new AmplitudeMaker(_scale, (before.Mean + after.Mean) / 2);
+        FitPoint[] points = CurveSweep.FitPoints(sweep.Points, maker);
+        var declared = new FitOptions { PrefactorExponent = options.PrefactorExponent, F0GuessHz = target.F0Hz, QGuess = target.Q };
+        var fitter = new ResonanceFitter(Math.Max(points.Length, 16));
+        ResonanceFit fit = fitter.Fit(points, declared);
+        double[] residuals = fitter.NormalizedResiduals.ToArray();
+        int half = points.Length / 2;
+        return new Measurement
+        {
+            Options = options,
+            Box = box.Identity,
+            Target = target,
+            Plan = plan,
+            Survey = survey,
+            Points = sweep.Points,
+            Maker = maker,
+            FitPoints = points,
+            Fit = fit,
+            Residuals = residuals,
+            There = fitter.Fit(points.AsSpan(0, half), declared),
+            Back = fitter.Fit(points.AsSpan(half), declared),
+            OtherDutyFit = fitter.Fit(CurveSweep.FitPoints(other.Points, maker), declared),
+            OtherDuty = otherDuty,
+            DwellPairs = Pair(sweep.Points, longer.Points, maker),
+            DarkBefore = before,
+            DarkAfter = after,
+            Missing = sweep.Missing + other.Missing + longer.Missing,
+            Saturated = search.Saturated,
+        };
+    }
+
+    /// <summary>Dark after the own ring has died, over whole mains periods.</summary>
+    private DarkLevel QuietDark(Target target)
+    {
+        double seconds = RingsToDie * (target.RingTimeS + options.Law.TimeConstantS);
+        box.Pause(TimeSpan.FromSeconds(seconds));
+        return box.Dark(DarkMs, cancel: cancel);
+    }
+
+    /// <summary>Two settings on either flank, where a sweep that is too fast shows most, and the one nearest the top.</summary>
+    private static Setting[] Flanks(MeasurePlan plan, Target target)
+    {
+        double[] at = [-1, -0.4, 0, 0.4, 1];
+        return [.. at.Select(u => plan.Settings.MinBy(s => Math.Abs(s.FrequencyHz - target.F0Hz - (u * target.BandwidthHz)))).Distinct()];
+    }
+
+    private static List<(AmplitudePoint First, AmplitudePoint Longer)> Pair(
+        IReadOnlyList<RawPoint> points, IReadOnlyList<RawPoint> longer, AmplitudeMaker maker)
+    {
+        // Upward points come first: those are the ones whose dwell followed a lower setting, as the longer ones do.
+        var first = points.GroupBy(point => point.Setting).ToDictionary(group => group.Key, group => group.First());
+        return [.. longer.Where(point => first.ContainsKey(point.Setting)).Select(point => (maker.Make(first[point.Setting]), maker.Make(point)))];
+    }
+
+    private ReadOutcome Judge(Measurement measurement)
+    {
+        List<Reason> reasons = ReadingChecks.All(measurement);
+        bool figures = measurement.Fit.IsFitted && reasons.All(reason => reason.AtBest != Verdict.None);
+        Budget budget = figures ? BudgetMaker.Make(measurement) : new Budget([]);
+        if (figures)
+        {
+            reasons.AddRange(BudgetReasons.Of(measurement, budget));
+        }
+
+        Verdict verdict = reasons.Select(reason => reason.AtBest).Append(figures ? Verdict.Sound : Verdict.None).Min();
+        ResonanceFit fit = measurement.Fit;
+        double clock = 1 + ((options.Clock?.Ppm ?? 0) * 1e-6);
+        double pull = options.Pull?.F0Relative ?? 0;
+        Reading reading = Document(measurement.Points, [measurement.DarkBefore, measurement.DarkAfter], verdict, reasons, budget) with
+        {
+            F0Hz = figures ? fit.F0Hz * clock * (1 - pull) : double.NaN,
+            Q = figures ? 1 / ((1 / fit.Q) - (options.Pull?.LossAdded ?? 0)) : double.NaN,
+            PeakCounts = figures ? fit.PeakAmplitude / Math.Sin(Math.PI * measurement.Target.Duty) : double.NaN,
+            FeedThrough = figures ? fit.FeedThrough.Ratio : double.NaN,
+        };
+        return new ReadOutcome(reading, fit, measurement.FitPoints, measurement.Survey);
+    }
+
+    private ReadOutcome Nothing(SurveyResult? survey, DarkLevel look, IReadOnlyList<Reason> reasons, IReadOnlyList<RawPoint> points) =>
+        new(Document(points.Count > 0 ? points : survey?.Raw ?? [], [look], Verdict.None, reasons, new Budget([])), null, [], survey);
+
+    private Reading Document(
+        IReadOnlyList<RawPoint> points, IReadOnlyList<DarkLevel> dark, Verdict verdict, IReadOnlyList<Reason> reasons, Budget budget)
+    {
+        DateTimeOffset now = options.Time.GetUtcNow();
+        return new Reading
+        {
+            Id = Guid.CreateVersion7(now),
+            Utc = now,
+            BoardTimeUs = points.Count > 0 ? (points[0].BoardTimeUs + points[^1].BoardTimeUs) / 2 : box.BoardTimeUs,
+            BoardSeconds = box.BoardSeconds,
+            Box = box.Identity,
+            HostVersion = options.HostVersion,
+            Coil = options.Coil,
+            Note = options.Note,
+            SetUp = options.SetUp,
+            F0Hz = double.NaN,
+            Q = double.NaN,
+            PeakCounts = double.NaN,
+            Budget = budget,
+            Verdict = verdict,
+            Reasons = reasons,
+            Points = points,
+            Dark = dark,
+        };
+    }
+}
