@@ -8,6 +8,9 @@ internal static class CommandList
 {
     public static IEnumerable<Command> Create(Shell shell)
     {
+        yield return ReadCommand.Create(shell);
+        yield return SurveyCommand.Create(shell);
+        yield return FitCommand.Create(shell);
         yield return BoxesCommand.Create(shell);
     }
 }
