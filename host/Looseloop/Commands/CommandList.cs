@@ -10,7 +10,6 @@ internal static class CommandList
     {
         yield return ReadCommand.Create(shell);
         yield return SurveyCommand.Create(shell);
-        yield return FitCommand.Create(shell);
         yield return BoxesCommand.Create(shell);
     }
 }
