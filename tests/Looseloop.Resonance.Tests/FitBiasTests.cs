@@ -8,8 +8,8 @@ namespace Looseloop.Resonance.Tests;
 /// </summary>
 public sealed class FitBiasTests
 {
-    private static readonly double[] Grid = TestCurves.Grid(201, 3);
-    private static readonly double Bandwidth = TestCurves.F0 / TestCurves.NarrowQ;
+    private static readonly double[] _grid = TestCurves.Grid(201, 3);
+    private static readonly double _bandwidth = TestCurves.F0 / TestCurves.NarrowQ;
 
     [Theory]
     [InlineData(0.01, 90, -0.0160, -0.0001)]
@@ -22,14 +22,14 @@ public sealed class FitBiasTests
     [InlineData(0.30, 90, -0.4908, -0.2053)]
     public void Feed_through_bends_the_three_parameter_fit_and_not_the_invariant_one(double b, double phase, double f0Bias, double qBias)
     {
-        FitPoint[] points = TestCurves.Points(Grid, f => TestCurves.Amplitude(f, TestCurves.F0, TestCurves.NarrowQ, 1, b, phase));
+        FitPoint[] points = TestCurves.Points(_grid, f => TestCurves.Amplitude(f, TestCurves.F0, TestCurves.NarrowQ, 1, b, phase));
         ResonanceFit plain = ResonanceFitter.FitOnce(points, new FitOptions { Background = BackgroundModel.None });
-        Assert.Equal(f0Bias, (plain.F0Hz - TestCurves.F0) / Bandwidth, 2e-4);
+        Assert.Equal(f0Bias, (plain.F0Hz - TestCurves.F0) / _bandwidth, 2e-4);
         Assert.Equal(qBias, (plain.Q / TestCurves.NarrowQ) - 1, 2e-4);
 
         ResonanceFit invariant = ResonanceFitter.FitOnce(points, new FitOptions());
         Assert.True(invariant.IsFitted);
-        Assert.Equal(0, (invariant.F0Hz - TestCurves.F0) / Bandwidth, 1e-5);
+        Assert.Equal(0, (invariant.F0Hz - TestCurves.F0) / _bandwidth, 1e-5);
         Assert.Equal(1, invariant.Q / TestCurves.NarrowQ, 1e-5);
     }
 
@@ -45,7 +45,7 @@ public sealed class FitBiasTests
         FitPoint[] points = TestCurves.Points(
             TestCurves.Grid(201, k), f => TestCurves.Amplitude(f, TestCurves.F0, TestCurves.NarrowQ, 1) + offset);
         ResonanceFit plain = ResonanceFitter.FitOnce(points, new FitOptions { Background = BackgroundModel.None });
-        Assert.Equal(0, (plain.F0Hz - TestCurves.F0) / Bandwidth, 1e-5);
+        Assert.Equal(0, (plain.F0Hz - TestCurves.F0) / _bandwidth, 1e-5);
         Assert.Equal(qBias, (plain.Q / TestCurves.NarrowQ) - 1, Math.Abs(offset) > 0.02 ? 5e-4 : 2e-4);
     }
 
@@ -73,10 +73,10 @@ public sealed class FitBiasTests
     public void The_raw_peak_moves_by_half_the_quadrature()
     {
         // b = 0.1 at 90 degrees: -0.0495 bandwidths, in the curve that the fit itself draws.
-        FitPoint[] points = TestCurves.Points(Grid, f => TestCurves.Amplitude(f, TestCurves.F0, TestCurves.NarrowQ, 1, 0.1, 90));
+        FitPoint[] points = TestCurves.Points(_grid, f => TestCurves.Amplitude(f, TestCurves.F0, TestCurves.NarrowQ, 1, 0.1, 90));
         ResonanceFit fit = ResonanceFitter.FitOnce(points, new FitOptions());
-        double top = Enumerable.Range(-2000, 4001).Select(i => TestCurves.F0 + (i * 1e-4 * Bandwidth)).MaxBy(f => fit.AmplitudeAt(f));
-        Assert.Equal(-0.0495, (top - TestCurves.F0) / Bandwidth, 1e-4);
+        double top = Enumerable.Range(-2000, 4001).Select(i => TestCurves.F0 + (i * 1e-4 * _bandwidth)).MaxBy(f => fit.AmplitudeAt(f));
+        Assert.Equal(-0.0495, (top - TestCurves.F0) / _bandwidth, 1e-4);
     }
 
     [Theory]

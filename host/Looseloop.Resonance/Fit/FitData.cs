@@ -39,6 +39,9 @@ internal sealed class FitData
     /// <summary>The standard deviation that stands for an unknown one; 1 where variances are stated.</summary>
     public double UnknownSigma { get; private set; }
 
+    /// <summary>Root mean square of the points' standard deviations in amplitude.</summary>
+    public double TypicalSigma { get; private set; }
+
     public double LargestAmplitude { get; private set; }
 
     public double LowestHz { get; private set; }
@@ -174,6 +177,7 @@ internal sealed class FitData
         }
 
         UnknownSigma = VariancesStated ? 1 : Math.Max(LargestAmplitude * UnknownPart, double.Epsilon);
+        double squares = 0;
         for (int i = 0; i < Count; i++)
         {
             double variance = points[i].Variance;
@@ -190,6 +194,9 @@ internal sealed class FitData
             ProjectionWeight[i] = 1 / powerSigma;
             RobustRoot[i] = 1;
             Linear[i] = RootPart * sigma * RootPart * sigma;
+            squares += sigma * sigma;
         }
+
+        TypicalSigma = Math.Sqrt(squares / Count);
     }
 }

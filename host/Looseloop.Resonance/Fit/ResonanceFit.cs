@@ -26,8 +26,12 @@ public readonly record struct ResonanceFit()
     /// <summary>True if the points stated their variances.</summary>
     public bool VariancesStated { get; init; }
 
-    /// <summary><see cref="Stated"/> where the points stated their variances, else <see cref="Scatter"/>.</summary>
-    public ParameterCovariance Covariance => VariancesStated ? Stated : Scatter;
+    /// <summary>
+    /// The one to use: <see cref="Stated"/> where the points stated their variances and scatter accordingly; else
+    /// <see cref="Scatter"/>, which is then the larger.
+    /// </summary>
+    public ParameterCovariance Covariance =>
+        !VariancesStated || (ChiSquareProbability < 0.01 && Scatter.F0Hz2 > Stated.F0Hz2) ? Scatter : Stated;
 
     /// <summary>Standard uncertainty of f0, hertz, by <see cref="Covariance"/>.</summary>
     public double F0StandardHz => Covariance.F0Hz;

@@ -41,6 +41,11 @@ public sealed partial class ResonanceFitter
                 lowest = scale * scale * freedom;
                 _parameters.CopyTo(_best, 0);
             }
+
+            if (!IsPoor(lowest))
+            {
+                break;
+            }
         }
 
         return lowest;

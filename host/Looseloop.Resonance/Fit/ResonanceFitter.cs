@@ -21,7 +21,7 @@ public sealed partial class ResonanceFitter
     /// <summary>Below this the points do not speak for a resonance; pure noise reaches some 20 at best.</summary>
     private const double LeastEvidence = 40;
 
-    /// <summary>A sum of squares per degree of freedom, or a residual over the peak, that asks for a search of the whole range.</summary>
+    /// <summary>A sum of squares per degree of freedom, and a residual over the peak, that ask for a search of the whole range.</summary>
     private const double PoorChiSquare = 4;
     private const double PoorResidual = 0.03;
 
@@ -234,6 +234,6 @@ public sealed partial class ResonanceFitter
         int freedom = Math.Max(_data.Count - _data.ParameterCount, 1);
         double perFreedom = sum / freedom;
         return perFreedom > PoorChiSquare
-            && (_data.VariancesStated || Math.Sqrt(perFreedom) * _data.UnknownSigma > PoorResidual * _data.LargestAmplitude);
+            && Math.Sqrt(perFreedom) * _data.TypicalSigma > PoorResidual * _data.LargestAmplitude;
     }
 }
