@@ -2,82 +2,78 @@ using Looseloop.Protocol;
 
 namespace Looseloop.Firmware
 {
-    /// <summary>Takes a host line apart and does, or begins, what it asks.</summary>
+    /// <summary>Does, or begins, what a host line asks.</summary>
     internal sealed class RequestHandler
     {
-        private const int LargestDivider = 1023 * FrequencyGrid.DividerScale;
-        private const int SettingsPerList = 8;
-
-        private readonly LineReader _reader = new LineReader();
+        private readonly RequestFields _fields = new RequestFields();
         private readonly BoxProfile _profile;
         private readonly IPickup _pickup;
         private readonly Talker _talker;
-        private readonly Drive _drive;
-        private readonly DriveInterlock _interlock;
         private readonly DriveLimits _limits;
-        private readonly PlanStore _plan;
-        private readonly DarkTask _dark;
-        private readonly SweepEngine _sweep;
-        private readonly RingEngine _ring;
-        private int _lastPlanned; // number of the `run` or `list` that was the last request done, else 0
-        private long _field;
+        private readonly DriveInterlock _interlock;
+        private readonly PlanRequests _planning;
+        private readonly WorkRequests _work;
 
-        public RequestHandler(
-            BoxProfile profile, IPickup pickup, Talker talker, SteadyClock clock, Drive drive)
+        public RequestHandler(BoxProfile profile, IPickup pickup, Talker talker, SteadyClock clock, Drive drive)
         {
             _profile = profile;
             _pickup = pickup;
             _talker = talker;
-            _drive = drive;
-            var sampler = new Sampler(pickup, clock, profile.FullCounts);
             _limits = new DriveLimits(profile);
+            var sampler = new Sampler(pickup, clock, profile.FullCounts);
             _interlock = new DriveInterlock(_limits, sampler, clock);
-            _plan = new PlanStore(_limits);
-            _dark = new DarkTask(talker, sampler, _interlock);
-            _sweep = new SweepEngine(_plan, talker, sampler, clock, drive, _interlock);
-            _ring = new RingEngine(talker, sampler, clock, drive, _interlock);
+            var plan = new PlanStore(_limits);
+            _planning = new PlanRequests(plan, talker);
+            var dark = new DarkTask(talker, sampler, _interlock);
+            var sweep = new SweepEngine(plan, talker, sampler, clock, drive, _interlock);
+            var ring = new RingEngine(talker, sampler, clock, drive, _interlock);
+            _work = new WorkRequests(pickup, drive, _limits, plan, dark, sweep, ring);
         }
 
         /// <summary>The work in progress, or null.</summary>
-        public Activity Current { get; set; }
+        public Activity Current
+        {
+            get { return _work.Current; }
+            set { _work.Current = value; }
+        }
 
-        /// <summary>The number of the request being handled; 0 between requests.</summary>
+        /// <summary>The number of the request being handled, or handled last; 0 if that line had none.</summary>
         public int Request { get; private set; }
 
         /// <summary>True if the line has its mark and a right checksum; it can then be handled.</summary>
         public bool Open(byte[] line, int count)
         {
-            return _reader.Open(line, count, LineWriter.HostMark);
+            Request = 0;
+            return _fields.Open(line, count);
         }
 
         /// <summary>Handles the line that was opened.</summary>
         public void Handle()
         {
-            Request = 0;
-            if (!Field(1, WireLimits.LastRequestNumber))
+            int code = FaultCode.BadFields;
+            if (_fields.Take(1, WireLimits.LastRequestNumber, out int number))
             {
-                _talker.Fault(0, FaultCode.BadFields);
-                return;
+                Request = number;
+                if (_fields.TakeWord())
+                {
+                    code = Do();
+                }
             }
 
-            Request = (int)_field;
-            int code = _reader.TryWord() ? Do() : FaultCode.BadFields;
             if (code != FaultCode.None)
             {
                 _talker.Fault(Request, code);
             }
-
-            Request = 0;
         }
 
         private int Do()
         {
-            if (_reader.WordIs(Verb.Keep))
+            if (_fields.Is(Verb.Keep))
             {
-                return NoMoreFields();
+                return _fields.More ? FaultCode.BadFields : FaultCode.None;
             }
 
-            if (_reader.WordIs(Verb.Halt))
+            if (_fields.Is(Verb.Halt))
             {
                 return Halt();
             }
@@ -88,54 +84,53 @@ namespace Looseloop.Firmware
                 return Request == Current.Request ? FaultCode.None : FaultCode.Busy;
             }
 
-            bool again = Request == _lastPlanned;
-            _lastPlanned = 0;
-            if (_reader.WordIs(Verb.Run))
+            if (_fields.Is(Verb.Run))
             {
-                return again ? Planned() : Run();
+                return _planning.Run(Request, _fields);
             }
 
-            if (_reader.WordIs(Verb.List))
+            if (_fields.Is(Verb.List))
             {
-                return again ? Planned() : List();
+                return _planning.List(Request, _fields);
             }
 
+            _planning.ForgetLast();
             return DoOther();
         }
 
         private int DoOther()
         {
-            if (_reader.WordIs(Verb.Sweep))
+            if (_fields.Is(Verb.Sweep))
             {
-                return Sweep();
+                return _work.Sweep(Request, _fields);
             }
 
-            if (_reader.WordIs(Verb.Dark))
+            if (_fields.Is(Verb.Dark))
             {
-                return Dark();
+                return _work.Dark(Request, _fields);
             }
 
-            if (_reader.WordIs(Verb.Ring))
+            if (_fields.Is(Verb.Ring))
             {
-                return Ring();
+                return _work.Ring(Request, _fields);
             }
 
-            if (_reader.WordIs(Verb.Plan))
+            if (_fields.Is(Verb.Plan))
             {
-                return Plan();
+                return _planning.Plan(Request, _fields);
             }
 
-            if (_reader.WordIs(Verb.Limits))
+            if (_fields.Is(Verb.Limits))
             {
                 return Limits();
             }
 
-            return _reader.WordIs(Verb.Identify) ? Identify() : FaultCode.UnknownVerb;
+            return _fields.Is(Verb.Identify) ? Identify() : FaultCode.UnknownVerb;
         }
 
         private int Identify()
         {
-            if (_reader.More)
+            if (_fields.More)
             {
                 return FaultCode.BadFields;
             }
@@ -153,339 +148,41 @@ namespace Looseloop.Firmware
 
         private int Limits()
         {
-            if (_reader.More)
+            if (_fields.More && !ChangeLimits())
             {
-                if (!Field(WireLimits.LowestHz, WireLimits.HighestHz))
-                {
-                    return FaultCode.BadFields;
-                }
-
-                int lowHz = (int)_field;
-                if (!Field(WireLimits.LowestHz, WireLimits.HighestHz))
-                {
-                    return FaultCode.BadFields;
-                }
-
-                int highHz = (int)_field;
-                if (!Field(0, WireLimits.HighestPedestalCounts))
-                {
-                    return FaultCode.BadFields;
-                }
-
-                int pedestal = (int)_field;
-                if (!Field(1, _profile.FullCounts) || _reader.More || !_limits.TryChange(lowHz, highHz, pedestal, (int)_field))
-                {
-                    return FaultCode.BadFields;
-                }
+                return FaultCode.BadFields;
             }
 
             _talker.Limits(Request, _limits);
             return FaultCode.None;
         }
 
-        private int Plan()
+        private bool ChangeLimits()
         {
-            if (_reader.More)
-            {
-                return FaultCode.BadFields;
-            }
-
-            _plan.Clear();
-            _talker.Planned(Request, _plan.Settings);
-            return FaultCode.None;
-        }
-
-        private int Run()
-        {
-            if (!Field(1, FrequencyGrid.Esp32DutyBits))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int bits = (int)_field;
-            if (!Field(1, LargestDivider))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int divider = (int)_field;
-            if (!Field(-LargestDivider, LargestDivider))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int stride = (int)_field;
-            if (!Field(1, WireLimits.SweepPoints))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int count = (int)_field;
-            if (!Field(1, 1 << FrequencyGrid.Esp32DutyBits) || _reader.More)
-            {
-                return FaultCode.BadFields;
-            }
-
-            int code = _plan.TryAdd(bits, divider, stride, count, (int)_field);
-            return code == FaultCode.None ? Planned() : code;
-        }
-
-        private int List()
-        {
-            int before = _plan.Entries;
-            int code = FaultCode.None;
-            int settings = 0;
-            do
-            {
-                code = settings < SettingsPerList ? ListOne() : FaultCode.BadFields;
-                settings++;
-            }
-            while (code == FaultCode.None && _reader.More);
-
-            if (code != FaultCode.None)
-            {
-                _plan.CutBack(before);
-                return code;
-            }
-
-            return Planned();
-        }
-
-        private int ListOne()
-        {
-            if (!Field(1, FrequencyGrid.Esp32DutyBits))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int bits = (int)_field;
-            if (!Field(1, LargestDivider))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int divider = (int)_field;
-            return Field(1, 1 << FrequencyGrid.Esp32DutyBits)
-                ? _plan.TryAdd(bits, divider, 0, 1, (int)_field)
-                : FaultCode.BadFields;
-        }
-
-        private int Planned()
-        {
-            _lastPlanned = Request;
-            _talker.Planned(Request, _plan.Settings);
-            return FaultCode.None;
-        }
-
-        private int Dark()
-        {
-            if (!Field(1, WireLimits.LongestDarkMs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int durationMs = (int)_field;
-            if (!Field(0, WireLimits.LongestSpacingUs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int spacingUs = (int)_field;
-            if (!Field(0, int.MaxValue) || _reader.More)
-            {
-                return FaultCode.BadFields;
-            }
-
-            if (!HasInput(_field))
-            {
-                return FaultCode.NoSuchInput;
-            }
-
-            _dark.Begin(Request, durationMs, spacingUs, (int)_field);
-            Current = _dark;
-            return FaultCode.None;
-        }
-
-        private int Sweep()
-        {
-            if (!Field(0, WireLimits.LongestDwellUs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int dwellUs = (int)_field;
-            if (!Field(1, WireLimits.SamplesPerPoint))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int samples = (int)_field;
-            if (!Field(0, WireLimits.LongestSpacingUs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int spacingUs = (int)_field;
-            if (!Field(SweepOrder.AsPlanned, SweepOrder.ThereAndBack))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int order = (int)_field;
-            if (!Field(0, WireLimits.PointsPerPack) || _field == 1)
-            {
-                return FaultCode.BadFields;
-            }
-
-            int pointsPerLine = (int)_field;
-            if (!Field(0, int.MaxValue) || _reader.More)
-            {
-                return FaultCode.BadFields;
-            }
-
-            int code = MaySweep(order, _field);
-            if (code == FaultCode.None)
-            {
-                _sweep.Begin(Request, dwellUs, samples, spacingUs, order, pointsPerLine, (int)_field);
-                Current = _sweep;
-            }
-
-            return code;
-        }
-
-        private int MaySweep(int order, long channel)
-        {
-            if (_plan.Settings == 0)
-            {
-                return FaultCode.PlanEmpty;
-            }
-
-            if (order == SweepOrder.ThereAndBack && 2 * _plan.Settings > WireLimits.SweepPoints)
-            {
-                return FaultCode.PlanFull;
-            }
-
-            if (!HasInput(channel))
-            {
-                return FaultCode.NoSuchInput;
-            }
-
-            return _plan.IsAllowed() ? MayDrive() : FaultCode.OutsideLimits;
-        }
-
-        private int Ring()
-        {
-            if (!Field(1, FrequencyGrid.Esp32DutyBits))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int bits = (int)_field;
-            if (!Field(1, LargestDivider))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int divider = (int)_field;
-            if (!Field(1, 1 << FrequencyGrid.Esp32DutyBits))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int duty = (int)_field;
-            int code = RingTimes();
-            if (code == FaultCode.None)
-            {
-                code = _limits.Allow(bits, divider, duty) ? MayDrive() : FaultCode.OutsideLimits;
-            }
-
-            if (code == FaultCode.None)
-            {
-                _ring.Begin(Request, bits, divider, duty);
-                Current = _ring;
-            }
-
-            return code;
-        }
-
-        private int RingTimes()
-        {
-            if (!Field(1, WireLimits.LongestDwellUs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int driveUs = (int)_field;
-            if (!Field(0, WireLimits.LongestRingDelayUs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int delayUs = (int)_field;
-            if (!Field(0, WireLimits.LongestRingDelayUs))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int staggerUs = (int)_field;
-            if (!Field(1, WireLimits.RingSamples))
-            {
-                return FaultCode.BadFields;
-            }
-
-            int samples = (int)_field;
-            if (!Field(1, WireLimits.RingRepeats) || _reader.More
-                || delayUs + (_field - 1) * staggerUs > WireLimits.LongestRingDelayUs)
-            {
-                return FaultCode.BadFields;
-            }
-
-            _ring.SetTimes(driveUs, delayUs, staggerUs, samples, (int)_field);
-            return FaultCode.None;
-        }
-
-        private int MayDrive()
-        {
-            if (_drive.IsUnsure)
-            {
-                return FaultCode.DriveFailed;
-            }
-
-            // The look needs the detector, whatever is to be measured.
-            return HasInput(Channel.Detector) ? FaultCode.None : FaultCode.NoSuchInput;
+            return _fields.Take(WireLimits.LowestHz, WireLimits.HighestHz, out int lowHz)
+                && _fields.Take(WireLimits.LowestHz, WireLimits.HighestHz, out int highHz)
+                && _fields.Take(0, WireLimits.HighestPedestalCounts, out int pedestal)
+                && _fields.Take(1, _profile.FullCounts, out int field)
+                && !_fields.More
+                && _limits.TryChange(lowHz, highHz, pedestal, field);
         }
 
         private int Halt()
         {
-            if (_reader.More)
+            if (_fields.More)
             {
                 return FaultCode.BadFields;
             }
 
             Activity current = Current;
-            Current = null;
             if (current != null)
             {
                 current.EndEarly(Ending.Halted, FaultCode.None);
+                Current = null;
             }
 
             _talker.Halted(Request);
             return FaultCode.None;
-        }
-
-        private int NoMoreFields()
-        {
-            return _reader.More ? FaultCode.BadFields : FaultCode.None;
-        }
-
-        private bool HasInput(long channel)
-        {
-            return channel < Channel.Count && _pickup.Has((int)channel);
-        }
-
-        private bool Field(long lowest, long highest)
-        {
-            return _reader.TryNumber(lowest, highest, out _field);
         }
     }
 }
