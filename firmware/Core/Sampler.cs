@@ -185,7 +185,7 @@ namespace Looseloop.Firmware
             for (int taken = 0; taken < MostAtOnce && Samples < _wanted; taken++)
             {
                 long dueUs = FromUs + (long)Samples * _spacingUs;
-                if (dueUs > untilUs)
+                if (dueUs > untilUs || dueUs >= _endUs)
                 {
                     _clock.WaitUntilUs(untilUs);
                     return;

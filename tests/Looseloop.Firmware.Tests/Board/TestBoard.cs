@@ -25,6 +25,10 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
 
     public int SetCostUs { get; set; } = 300;
 
+    public int StopCostUs { get; set; } = 20;
+
+    public int ClockCostUs { get; set; } = 2;
+
     /// <summary>Time a byte takes either way, µs; 0: none.</summary>
     public double ByteUs { get; set; } = 1e6 / 11520;
 
@@ -61,6 +65,9 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
     public double DriveDuty { get; private set; }
 
     public int Reads { get; private set; }
+
+    /// <summary>Conversions since the drive last stopped.</summary>
+    public int ReadsSinceStop { get; private set; } = int.MaxValue / 2;
 
     public int Starts { get; private set; }
 
@@ -118,10 +125,11 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
     public void Stop()
     {
         BeforeStop?.Invoke(this);
-        TimeUs += 20;
+        TimeUs += StopCostUs;
         if (IsDriving)
         {
             StoppedUs = TimeUs;
+            ReadsSinceStop = 0;
         }
 
         IsDriving = false;
@@ -136,13 +144,14 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
     {
         BeforeRead?.Invoke(this);
         Reads++;
+        ReadsSinceStop++;
         TimeUs += ReadCostUs;
         return Level(this, channel);
     }
 
     public long NowUs()
     {
-        TimeUs += 2;
+        TimeUs += ClockCostUs;
         return TimeUs + ClockErrorUs;
     }
 
