@@ -1,0 +1,19 @@
+using Looseloop.Bench;
+using Looseloop.Box;
+using Looseloop.Procedures;
+using Looseloop.Procedures.Read;
+using Looseloop.Readings;
+
+namespace Looseloop.Campaign;
+
+/// <summary>One reading of a virtual world, as the program takes it.</summary>
+public static class BenchReading
+{
+    public static ReadOutcome Take(World world, ulong seed, Func<ReadOptions, ReadOptions>? change = null)
+    {
+        using var link = new VirtualBox(world, seed);
+        using BoxSession box = BoxSession.Open(link, TimeSpan.FromSeconds(5));
+        var options = new ReadOptions { Law = Laws.Of(world), HostVersion = "campaign", Time = link.Time };
+        return new ReadProcedure(box, change?.Invoke(options) ?? options, NoWatch.Instance, CancellationToken.None).Run();
+    }
+}
