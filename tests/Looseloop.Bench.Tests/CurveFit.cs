@@ -76,7 +76,7 @@ internal static class CurveFit
 
     /// <summary>
     /// Five parameters of a resonance with constant feed-through, power form (n0 + n1 x + n2 x^2) / (1 + x^2) with
-    /// x = 2 (u - centre) / width, fitted in amplitude.
+    /// x = 2 (u - centre) / width, fitted so that each point counts by its relative error.
     /// </summary>
     /// <returns>Centre and width first.</returns>
     public static double[] FeedThrough(double[] u, double[] y)
@@ -85,13 +85,13 @@ internal static class CurveFit
         double square = peak * peak;
         return Run(
             u,
-            y,
+            [.. y.Select(static value => Math.Log(value))],
             [u[Array.IndexOf(y, peak)], 1, square, 0, 1e-3 * square],
             [1, 1, square, square, square],
-            static (at, p) =>
+            (at, p) =>
             {
                 double x = 2 * (at - p[0]) / p[1];
-                return Math.Sqrt(Math.Max((p[2] + (p[3] * x) + (p[4] * x * x)) / (1 + (x * x)), 0));
+                return 0.5 * Math.Log(Math.Max((p[2] + (p[3] * x) + (p[4] * x * x)) / (1 + (x * x)), 1e-12 * square));
             });
     }
 

@@ -80,6 +80,22 @@ public class SweepDynamicsTests
         Assert.Equal(qBias, q, tolerance);
     }
 
+    [Theory]
+    [InlineData(0.1, 3, 0.5, 0.00625, double.NaN, 3e-5)]
+    [InlineData(0.1, 3, 1, 0.01863, -0.00416, 3e-5)] // K 18
+    [InlineData(0.1, 5, 1, 0.00265, -0.00070, 3e-5)]
+    [InlineData(0.1, 10, 1, 0.00002, 0, 2e-5)]
+    [InlineData(0.1, 5, 2, 0.01573, double.NaN, 5e-5)]
+    public void ALaggingDetectorMovesTheFitFurther(double step, double dwell, double lag, double f0Bias, double qBias, double tolerance)
+    {
+        (double f0, double q) = Sweep(DetectorKind.MeanAbsolute, step, dwell, lag);
+        Assert.Equal(f0Bias, f0, tolerance);
+        if (!double.IsNaN(qBias))
+        {
+            Assert.Equal(qBias, q, tolerance);
+        }
+    }
+
     // step in bandwidths, dwell and lag in ring times; one sample at the end of each dwell.
     internal static (double F0Bias, double QBias) Sweep(DetectorKind kind, double step, double dwell, double lag)
     {

@@ -36,7 +36,7 @@ internal abstract class Detector
     public static Detector Of(World world, CoilResponse response) => world.Detector.Kind switch
     {
         DetectorKind.RmsLinear or DetectorKind.RmsLog or DetectorKind.Square => new PowerDetector(world, response),
-        _ => throw new NotSupportedException($"A detector of kind {world.Detector.Kind} is not built yet."),
+        _ => new WaveformDetector(world, response),
     };
 
     /// <summary>The logarithmic output for a mean power, volts.</summary>
