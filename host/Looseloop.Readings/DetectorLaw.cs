@@ -18,6 +18,18 @@ public sealed record DetectorLaw(
     DetectorKind Kind, double PedestalCounts, double PedestalUncertainty, double Shape, double ShapeUncertainty,
     double ReferenceCounts, double TimeConstantS, DateTimeOffset? ReadOn)
 {
+    /// <summary>
+    /// By how much the middle of the range may still stray from the law, as a share of the largest level that the ladder
+    /// saw (a bound, half-width of a rectangle); NaN where no ladder has read it.
+    /// </summary>
+    public double BowBound { get; init; } = double.NaN;
+
+    /// <summary>By how much longer the drive is high than its timer makes it, seconds; NaN where no ladder has read it.</summary>
+    public double HighExtraS { get; init; } = double.NaN;
+
+    /// <summary>Standard uncertainty of <see cref="HighExtraS"/>, seconds; NaN where unknown.</summary>
+    public double HighExtraUncertaintyS { get; init; } = double.NaN;
+
     /// <summary>True if harmonics only add a constant in power, which the fit spans.</summary>
     public bool RespondsToPower => Kind is DetectorKind.RmsLinear or DetectorKind.RmsLog or DetectorKind.SquareLaw;
 
