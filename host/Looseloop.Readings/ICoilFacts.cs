@@ -13,7 +13,7 @@ public interface ICoilFacts
     Pull? PullOf(string coil, IReadOnlyDictionary<string, string> setUp);
 
     /// <summary>Keeps what stands with the coil, all of it. A call that returns has kept it.</summary>
-    void Keep(string coil, IReadOnlyDictionary<string, string> setUp, DateTimeOffset on);
+    void Keep(string coil, IReadOnlyDictionary<string, string> setUp, DateTimeOffset utc);
 
     /// <summary>Keeps the pull found for a coil and set-up. A call that returns has kept it.</summary>
     void Keep(string coil, IReadOnlyDictionary<string, string> setUp, Pull pull);
