@@ -13,6 +13,7 @@ public static class BenchReading
     {
         using var link = new VirtualBox(world, seed);
         using BoxSession box = BoxSession.Open(link, TimeSpan.FromSeconds(5));
+        Interlock.Set(box, Laws.Of(world));
         var options = new ReadOptions { Law = Laws.Of(world), HostVersion = "campaign", Time = link.Time };
         return new ReadProcedure(box, change?.Invoke(options) ?? options, NoWatch.Instance, CancellationToken.None).Run();
     }

@@ -4,11 +4,16 @@ using Looseloop.Campaign;
 return args switch
 {
     ["coverage", string world, string seeds] => Coverage.Run(WorldShelf.Load(world), int.Parse(seeds, System.Globalization.CultureInfo.InvariantCulture)),
+    ["random", string worlds, .. string[] rest] => RandomCampaign.Run(
+        int.Parse(worlds, System.Globalization.CultureInfo.InvariantCulture),
+        rest.Length > 0 ? ulong.Parse(rest[0], System.Globalization.CultureInfo.InvariantCulture) : 1,
+        rest.Length > 1 && rest[1] != "-" ? Enum.Parse<Defect>(rest[1]) : null,
+        rest.Contains("-v")),
     _ => Usage(),
 };
 
 static int Usage()
 {
-    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS");
+    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v]");
     return 2;
 }

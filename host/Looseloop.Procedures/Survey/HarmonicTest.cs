@@ -1,10 +1,10 @@
 using Looseloop.Readings;
+using Looseloop.Resonance;
 
 namespace Looseloop.Procedures.Survey;
 
 /// <summary>
-/// Which harmonic of the drive causes a response, from how its amplitude follows the duty. The n-th harmonic of a pulse
-/// train of duty D has the amplitude 2 |sin(n pi D)| / (n pi) (Fourier series).
+/// Which harmonic of the drive causes a response, from how its amplitude follows the duty.
 /// </summary>
 public static class HarmonicTest
 {
@@ -14,12 +14,9 @@ public static class HarmonicTest
     /// <summary>Orders that the two duties tell apart; higher odd ones look like 1 or 3 and are found by a look at n times f.</summary>
     private static readonly int[] Orders = [1, 3, 5, 2, 4];
 
-    /// <summary>Amplitude of the n-th harmonic of a pulse train that goes from 0 to 1.</summary>
-    public static double Amplitude(int order, double duty) => 2 * Math.Abs(Math.Sin(order * Math.PI * duty)) / (order * Math.PI);
-
     /// <summary>The ratio of amplitudes that the n-th harmonic makes at two settings of one frequency.</summary>
     public static double Ratio(int order, Setting low, Setting high) =>
-        Amplitude(order, low.Duty) / Math.Max(Amplitude(order, high.Duty), 1e-3);
+        DutyHarmonics.Amplitude(order, low.Duty) / Math.Max(DutyHarmonics.Amplitude(order, high.Duty), 1e-3);
 
     /// <summary>The order whose ratio fits, or 0 if none does or more than one might.</summary>
     /// <param name="ratio">Amplitude at <paramref name="low"/> over that at <paramref name="high"/>.</param>

@@ -60,7 +60,14 @@ internal static class BoxChoice
                 link = new LinkTrace(link, trace);
             }
 
-            return new ChosenBox(BoxSession.Open(link, _patience, shell.Cancel), world is null ? null : LawOf(world), trace);
+            BoxSession session = BoxSession.Open(link, _patience, shell.Cancel);
+            DetectorLaw? law = world is null ? null : LawOf(world);
+            if (law is not null)
+            {
+                Procedures.Interlock.Set(session, law);
+            }
+
+            return new ChosenBox(session, law, trace);
         }
         catch
         {

@@ -22,6 +22,8 @@ internal static class ResponseTable
 
     private static readonly string[] _frequencyNames = ["frequency", "freq", "f"];
     private static readonly string[] _amplitudeNames = ["amplitude", "amp", "magnitude", "level", "y", "v"];
+    private static readonly string[] _realNames = ["re", "real", "s21_re"];
+    private static readonly string[] _imaginaryNames = ["im", "imag", "imaginary", "s21_im"];
     private static readonly string[] _uncertaintyNames = ["uncertainty", "amplitude_uncertainty", "sigma", "u", "sd"];
 
     /// <summary>What the amplitude column holds.</summary>
@@ -86,20 +88,22 @@ internal static class ResponseTable
         }
     }
 
-    private sealed record Columns(int Frequency, double Unit, int Amplitude, int Uncertainty, int Group, int Weight, bool FromHeader)
+    private sealed record Columns(int Frequency, double Unit, int Amplitude, int Imaginary, int Uncertainty, int Group, int Weight, bool FromHeader)
     {
         public static Columns Of(string[] cells)
         {
             if (cells.Length > 0 && double.TryParse(cells[0], NumberStyles.Float, CultureInfo.InvariantCulture, out _))
             {
-                return new Columns(0, 1, 1, cells.Length > 2 ? 2 : -1, -1, -1, false);
+                return new Columns(0, 1, 1, -1, cells.Length > 2 ? 2 : -1, -1, -1, false);
             }
 
             int frequency = Find(cells, _frequencyNames);
             int amplitude = Find(cells, _amplitudeNames);
+            int imaginary = amplitude < 0 ? Find(cells, _imaginaryNames) : -1;
+            amplitude = imaginary >= 0 ? Find(cells, _realNames) : amplitude;
             frequency = frequency < 0 ? 0 : frequency;
             return new Columns(
-                frequency, UnitOf(cells[frequency]), amplitude < 0 ? (frequency == 0 ? 1 : 0) : amplitude, Find(cells, _uncertaintyNames),
+                frequency, UnitOf(cells[frequency]), amplitude < 0 ? (frequency == 0 ? 1 : 0) : amplitude, imaginary, Find(cells, _uncertaintyNames),
                 Find(cells, ["group"]), Find(cells, ["weight"]), true);
         }
 
@@ -107,6 +111,12 @@ internal static class ResponseTable
         {
             double frequencyHz = Number(cells, Frequency, "frequency", path, line) * Unit;
             double value = Number(cells, Amplitude, "amplitude", path, line);
+            if (Imaginary >= 0)
+            {
+                // A complex response: the fit looks at its magnitude.
+                value = double.Hypot(value, Number(cells, Imaginary, "imaginary part", path, line));
+            }
+
             double sigma = Uncertainty >= 0 ? Number(cells, Uncertainty, "uncertainty", path, line) : double.NaN;
             if (frequencyHz <= 0)
             {
