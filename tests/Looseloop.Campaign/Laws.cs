@@ -26,7 +26,11 @@ public static class Laws
             ? detector.MvPerDb * 1e-3 * countsPerVolt
             : detector.DiodeMv * 1e-3 * detector.Gain * countsPerVolt;
         double slowestUs = kind == Kind.Peak ? detector.DecayUs : detector.TimeConstantUs;
-        return DetectorLaw.Declared(kind, detector.PedestalVolts * countsPerVolt) with
+
+        // A logarithmic output rests on its own noise, not on its zero.
+        double floorDecibel = Math.Max((20 * Math.Log10(detector.FloorMv * 1e-3)) - detector.InterceptDbV, 0);
+        double restVolts = kind is Kind.RmsLog or Kind.LogOfWaveform ? floorDecibel * detector.MvPerDb * 1e-3 : 0;
+        return DetectorLaw.Declared(kind, (detector.PedestalVolts + restVolts) * countsPerVolt) with
         {
             Shape = shape,
             ShapeUncertainty = 0.03 * shape,

@@ -9,11 +9,13 @@ return args switch
         rest.Length > 0 ? ulong.Parse(rest[0], System.Globalization.CultureInfo.InvariantCulture) : 1,
         rest.Length > 1 && rest[1] != "-" ? Enum.Parse<Defect>(rest[1]) : null,
         rest.Contains("-v")),
+    ["one", string seed, .. string[] rest] => OneWorld.Run(
+        ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture), rest.Length > 0 ? Enum.Parse<Defect>(rest[0]) : null),
     _ => Usage(),
 };
 
 static int Usage()
 {
-    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v]");
+    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT]");
     return 2;
 }

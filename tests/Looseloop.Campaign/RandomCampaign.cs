@@ -89,7 +89,7 @@ public static class RandomCampaign
         }
     }
 
-    private static ReadOptions Read(ReadOptions options, RandomWorld.Drawn drawn) => drawn.LadderRead
+    internal static ReadOptions Read(ReadOptions options, RandomWorld.Drawn drawn) => drawn.LadderRead
         ? options with { Law = options.Law with { ReadOn = DateTimeOffset.UnixEpoch, ShapeUncertainty = options.Law.Shape * 0.003 } }
         : options;
 }

@@ -17,6 +17,9 @@ public static class CloseLook
     private const double RingsToSettle = 7;
     private const double QToSettle = 400;
 
+    /// <summary>A sweep runs ahead of the ring: the settled maximum may lie some steps from where the survey saw it.</summary>
+    private const int MostMoves = 2;
+
     /// <summary>What the look found.</summary>
     /// <param name="High">The setting of the maximum, duty 1/2.</param>
     /// <param name="Low">The same at duty 1/5.</param>
@@ -24,16 +27,33 @@ public static class CloseLook
     /// <param name="Sigma">Its standard uncertainty.</param>
     /// <param name="Ratio">Amplitude at 1/5 over that at 1/2.</param>
     /// <param name="RatioUncertainty">Its standard uncertainty.</param>
-    public sealed record Finding(Setting High, Setting Low, double Amplitude, double Sigma, double Ratio, double RatioUncertainty);
+    /// <param name="IsMaximum">False if the level still rose where the look ended: a slope of something else.</param>
+    public sealed record Finding(
+        Setting High, Setting Low, double Amplitude, double Sigma, double Ratio, double RatioUncertainty, bool IsMaximum);
 
-    /// <summary>Looks at the maximum near a frequency.</summary>
+    /// <summary>Looks at the maximum near a frequency, and follows it to where it settles.</summary>
     public static Finding Run(BoxSession box, AmplitudeMaker maker, double frequencyHz, CancellationToken cancel)
     {
         Setting centre = box.Grid.Nearest(frequencyHz, HighDuty);
+        for (int move = 0; ; move++)
+        {
+            Finding finding = At(box, maker, centre, cancel);
+            bool maximum = finding.High.FrequencyHz == centre.FrequencyHz;
+            if (maximum || move == MostMoves)
+            {
+                return finding with { IsMaximum = maximum };
+            }
+
+            centre = finding.High;
+        }
+    }
+
+    private static Finding At(BoxSession box, AmplitudeMaker maker, Setting centre, CancellationToken cancel)
+    {
         int[] steps = [-StepsAside, -1, 0, 1, StepsAside];
         Setting[] high = [.. steps.Select(step => SettingGrid.WithDuty(box.Grid.Steps(centre, step), HighDuty))];
         Setting[] low = [.. high.Select(setting => SettingGrid.WithDuty(setting, LowDuty))];
-        double tauS = QToSettle / (Math.PI * frequencyHz);
+        double tauS = QToSettle / (Math.PI * centre.FrequencyHz);
         int dwellUs = (int)(1e6 * RingsToSettle * (tauS + maker.Scale.Law.TimeConstantS));
         SweepResult result = box.Sweep(new SweepRequest([.. high, .. low], dwellUs, Samples), cancel: cancel);
         Power[] powers = new Power[high.Length * 2];
@@ -56,7 +76,7 @@ public static class CloseLook
         double floor = over.Value > 0 ? Math.Sqrt(Math.Sqrt(overLow.Variance) / over.Value) : double.PositiveInfinity;
         return new Finding(
             high[best], low[best], amplitude, Math.Sqrt(over.Variance) / (2 * Math.Max(Math.Abs(amplitude), 1e-9)), ratio,
-            Math.Min(ratio > 0 ? ratio * relative : double.PositiveInfinity, floor));
+            Math.Min(ratio > 0 ? ratio * relative : double.PositiveInfinity, floor), true);
     }
 
     /// <summary>A squared amplitude and its variance.</summary>

@@ -13,7 +13,7 @@ public static class ResponseNaming
     private const double OvertoneFrom = 1.7;
 
     /// <summary>Odd orders that look like a real response or a third harmonic at duty 1/5.</summary>
-    private static readonly int[] HighOrders = [7, 9, 11, 13];
+    private static readonly int[] HighOrders = [7, 9, 11, 13, 15, 17, 19];
 
     /// <summary>Names them, ascending in frequency.</summary>
     public static IReadOnlyList<Response> Name(IReadOnlyList<CloseLook.Finding> findings)
@@ -34,13 +34,10 @@ public static class ResponseNaming
         }
 
         int order = HarmonicTest.Order(finding.Ratio, finding.RatioUncertainty, finding.Low, finding.High);
-        foreach (int high in HighOrders)
+        // The n-th harmonic is 1/n as strong as the fundamental, so a ghost has n times itself at n times its frequency.
+        if (order is 1 or 3 or 0)
         {
-            if (order is 1 or 3 && !HasAt(all, 3 * frequencyHz, finding.Amplitude * 2) && HasAt(all, high * frequencyHz, finding.Amplitude * 0.5 * high))
-            {
-                order = high;
-                break;
-            }
+            order = Array.Find(HighOrders, high => IsGhostOf(finding, all, high)) is int high and > 0 ? high : order;
         }
 
         ResponseKind kind = order switch
@@ -66,6 +63,8 @@ public static class ResponseNaming
         };
     }
 
-    private static bool HasAt(CloseLook.Finding[] all, double frequencyHz, double atLeast) =>
-        all.Any(other => Math.Abs((other.High.FrequencyHz / frequencyHz) - 1) < SameFrequency && other.Amplitude >= atLeast);
+    private static bool IsGhostOf(CloseLook.Finding ghost, CloseLook.Finding[] all, int order) => all.Any(source =>
+        Math.Abs((source.High.FrequencyHz / (order * ghost.High.FrequencyHz)) - 1) < SameFrequency
+        && source.Amplitude > 0.4 * order * ghost.Amplitude
+        && source.Amplitude < 3 * order * ghost.Amplitude);
 }

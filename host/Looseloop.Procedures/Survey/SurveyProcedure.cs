@@ -7,7 +7,10 @@ namespace Looseloop.Procedures.Survey;
 /// <summary>Finds every response in a range and names it.</summary>
 public static class SurveyProcedure
 {
-    private const int MostResponses = 8;
+    private const int MostResponses = 10;
+
+    /// <summary>How far from a response its echoes are found, as a share of its frequency.</summary>
+    private const double EchoReach = 0.05;
 
     /// <summary>Surveys a range, hertz, and looks properly at what stands out.</summary>
     public static SurveyResult Run(
@@ -19,13 +22,30 @@ public static class SurveyProcedure
         IReadOnlyList<Maximum> maxima = ResponseFinder.Find(points, MostResponses);
         watch.Begin($"looking at {maxima.Count} {(maxima.Count == 1 ? "response" : "responses")}", maxima.Count * 0.15);
         var findings = new List<CloseLook.Finding>();
+        int looked = 0;
         foreach (Maximum maximum in maxima)
         {
-            findings.Add(CloseLook.Run(box, maker, maximum.FrequencyHz, cancel));
-            watch.Progress((double)findings.Count / maxima.Count);
+            CloseLook.Finding finding = CloseLook.Run(box, maker, maximum.FrequencyHz, cancel);
+            if (!IsEchoOf(finding, findings))
+            {
+                findings.Add(finding);
+            }
+
+            watch.Progress((double)++looked / maxima.Count);
         }
 
         return new SurveyResult(raw, points, look, ResponseNaming.Name(findings), maxima.Count > 0 && maxima[0].AtEdge);
+    }
+
+    /// <summary>
+    /// A survey passes a high Q faster than it rings out; the beat leaves maxima beside it that either settle onto it or are
+    /// gone when looked at.
+    /// </summary>
+    private static bool IsEchoOf(CloseLook.Finding finding, List<CloseLook.Finding> larger)
+    {
+        bool gone = !finding.IsMaximum || !(finding.Amplitude > 5 * finding.Sigma);
+        return larger.Any(other =>
+            Math.Abs((finding.High.FrequencyHz / other.High.FrequencyHz) - 1) is double apart && (apart < 1e-6 || (gone && apart < EchoReach)));
     }
 }
 
