@@ -13,10 +13,14 @@ internal sealed class WaveformDetector : Detector
     // Of all that is there: a free ring below this changes no count any more.
     private const double Negligible = 1e-5;
 
+    // Of all that is there: rings below this move the level in proportion, to a hundredth of their effect.
+    private const double Small = 0.02;
+
     private readonly Waveform _waveform = new();
     private readonly Complex[] _phasors;
     private readonly Complex[] _rate;
     private readonly int[] _harmonic;
+    private readonly Complex[] _slope;
     private readonly double _attackS;
     private readonly double _decayS;
     private readonly double _diodeVolts;
@@ -29,6 +33,7 @@ internal sealed class WaveformDetector : Detector
     private double _scale;
     private double _ringsUntilS;
     private double _settledS;
+    private bool _hasSlopes;
 
     public WaveformDetector(World world, CoilResponse response)
         : base(world, response)
@@ -36,6 +41,7 @@ internal sealed class WaveformDetector : Detector
         _phasors = new Complex[response.Steady.Length];
         _rate = new Complex[response.Pole.Length];
         _harmonic = new int[response.Pole.Length];
+        _slope = new Complex[response.Pole.Length];
         _diodeVolts = Parameters.DiodeMv * 1e-3;
         _floorPower = Parameters.FloorMv * Parameters.FloorMv * 1e-6;
         _peak = Parameters.Kind is DetectorKind.Peak or DetectorKind.PeakToPeak;
@@ -73,6 +79,7 @@ internal sealed class WaveformDetector : Detector
             }
         }
 
+        _hasSlopes = false;
         _ringsUntilS = timeS + latest;
         _settledS = _ringsUntilS + (14 * Math.Max(_attackS, _decayS));
     }
@@ -161,7 +168,7 @@ internal sealed class WaveformDetector : Detector
         }
     }
 
-    // Half of the fastest change that still matters, but no finer than the low-pass can show.
+    // As fine as the fastest change that still matters, but no finer than the low-pass can show.
     private double StepS(double timeS)
     {
         double fastest = 0;
@@ -175,12 +182,23 @@ internal sealed class WaveformDetector : Detector
         }
 
         double constantS = _peak ? Math.Max(_attackS, 0.1 * _decayS) : _attackS;
-        return Math.Max(fastest > 0 ? 0.5 / fastest : double.PositiveInfinity, constantS / 8);
+        return Math.Max(fastest > 0 ? 0.7 / fastest : double.PositiveInfinity, constantS / 8);
     }
 
     private double LevelAt(double timeS)
     {
         double t = timeS - _fromS;
+        double rings = 0;
+        for (int j = 0; j < _rate.Length; j++)
+        {
+            rings += _harmonic[j] != 0 ? Response.Ring[j].Magnitude * Math.Exp(_rate[j].Real * t) : 0;
+        }
+
+        return rings < Small * _scale && Response.Drives ? LevelBySlope(t) : LevelByWaveform(t);
+    }
+
+    private double LevelByWaveform(double t)
+    {
         Array.Copy(Response.Steady, _phasors, _phasors.Length);
         for (int j = 0; j < _rate.Length; j++)
         {
@@ -191,6 +209,50 @@ internal sealed class WaveformDetector : Detector
         }
 
         return Functional();
+    }
+
+    private double LevelBySlope(double t)
+    {
+        if (!_hasSlopes)
+        {
+            FindSlopes();
+        }
+
+        double level = _steadyLevel;
+        for (int j = 0; j < _rate.Length; j++)
+        {
+            if (_harmonic[j] != 0)
+            {
+                Complex ring = Response.Ring[j] * Exp(_rate[j] * t);
+                level += (_slope[j].Real * ring.Real) + (_slope[j].Imaginary * ring.Imaginary);
+            }
+        }
+
+        return level;
+    }
+
+    // How the steady level answers to a small addition to the harmonic that each ring counts to.
+    private void FindSlopes()
+    {
+        double step = Small / 2 * _scale;
+        for (int j = 0; j < _rate.Length; j++)
+        {
+            if (_harmonic[j] != 0)
+            {
+                _slope[j] = new Complex(Slope(_harmonic[j], step), Slope(_harmonic[j], new Complex(0, step)));
+            }
+        }
+
+        _hasSlopes = true;
+    }
+
+    private double Slope(int harmonic, Complex step)
+    {
+        Array.Copy(Response.Steady, _phasors, _phasors.Length);
+        _phasors[harmonic] = Response.Steady[harmonic] + step;
+        double up = Functional();
+        _phasors[harmonic] = Response.Steady[harmonic] - step;
+        return (up - Functional()) / (2 * step.Magnitude);
     }
 
     private double Functional()
