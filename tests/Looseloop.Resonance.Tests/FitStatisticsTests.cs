@@ -9,7 +9,7 @@ namespace Looseloop.Resonance.Tests;
 /// </summary>
 public sealed class FitStatisticsTests(ITestOutputHelper output)
 {
-    private const int Trials = 2500;
+    private const int Trials = 2000;
 
     [Theory]
     [InlineData(61, 1.5, 1e-3, 2.0216, 5.279)]
