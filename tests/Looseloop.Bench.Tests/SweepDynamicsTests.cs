@@ -96,12 +96,30 @@ public class SweepDynamicsTests
         }
     }
 
+    [Theory]
+    [InlineData(5, 0.077, -0.066)]
+    [InlineData(10, 0.030, -0.023)]
+    [InlineData(20, 0.008, -0.006)]
+    public void APeakDetectorThatFallsSlowlyCostsQ(double dwell, double f0Bias, double qBias)
+    {
+        // Section C: attack .1 and decay 10 ring times, step .1 bandwidths; figures of two digits.
+        double ringUs = Q / (Math.PI * F0Hz) * 1e6;
+        World world = Bare(DetectorKind.Peak, 0.1 * ringUs * 1e-6);
+        world = world with { Detector = world.Detector with { DecayUs = 10 * ringUs } };
+        (double f0, double q) = Sweep(world, 0.1, dwell, 1);
+        Assert.Equal(f0Bias, f0, 0.0015);
+        Assert.Equal(qBias, q, 0.0015);
+    }
+
     // step in bandwidths, dwell and lag in ring times; one sample at the end of each dwell.
-    internal static (double F0Bias, double QBias) Sweep(DetectorKind kind, double step, double dwell, double lag)
+    private static (double F0Bias, double QBias) Sweep(DetectorKind kind, double step, double dwell, double lag) =>
+        Sweep(Bare(kind, lag * Q / (Math.PI * F0Hz)), step, dwell, lag);
+
+    private static (double F0Bias, double QBias) Sweep(World world, double step, double dwell, double lag)
     {
         double ringS = Q / (Math.PI * F0Hz);
         double widthHz = F0Hz / Q;
-        var scene = new Scene(Bare(kind, lag * ringS), 1);
+        var scene = new Scene(world, 1);
         var u = new double[(int)Math.Round(5 / step) + 1];
         var y = new double[u.Length];
         double timeS = 0;

@@ -59,6 +59,61 @@ public class VirtualBoxTests
         Assert.InRange(box.Clock.Seconds - before, 30, 30.01);
     }
 
+    [Theory]
+    [InlineData("kestrel", "7 field-present")]
+    [InlineData("nightjar", "7 field-present")]
+    [InlineData("coot", "13 pickup-below-range")]
+    public void ItDoesNotDriveWhereItMustNot(string world, string fault)
+    {
+        string[] lines = Sweep(new VirtualBox(WorldShelf.Load(world)));
+        Assert.Contains(lines, line => line.Contains($" fault {fault} ", StringComparison.Ordinal));
+        Assert.DoesNotContain(lines, line => line.Contains(" point ", StringComparison.Ordinal));
+    }
+
+    [Fact]
+    public void AClockThatIsFastDrivesHighAndCountsFast()
+    {
+        World world = new() { Board = new BoardParameters { ClockPpm = 100 } };
+        var board = new VirtualBoard(world, 1, new VirtualClock());
+        board.Set(150_000, 0.5005);
+        board.Start();
+        Assert.True(board.IsDriving);
+        Assert.Equal(80e6 * 256 / (267 * 512) * 1.0001, board.DriveHz, 1e-6);
+        var clock = new VirtualClock();
+        var timed = new VirtualBoard(world, 1, clock);
+        clock.Advance(10_000);
+        Assert.InRange(timed.NowUs() - 10_000_000_000, 1_000_000, 1_000_010);
+    }
+
+    [Fact]
+    public void TextCostsWhatTheWireAndTheInterpreterTake()
+    {
+        // 1000 bytes: 60 us each to build, and on a wire of 115200 baud 86.8 us each; the port holds 256.
+        var clock = new VirtualClock();
+        var board = new VirtualBoard(new World(), 1, clock);
+        for (int i = 0; i < 10; i++)
+        {
+            board.Send(new byte[100], 100);
+        }
+
+        Assert.InRange(clock.Seconds, (1000 - 256) * 10.0 / 115_200, (1000 * 10.0 / 115_200) + 0.006);
+        Assert.Equal(0, board.ToHost.Take(new byte[2000], 0.005));
+        Assert.Equal(1000, board.ToHost.Take(new byte[2000], 0.1));
+    }
+
+    [Fact]
+    public void UnreadInputOverflows()
+    {
+        var clock = new VirtualClock();
+        var board = new VirtualBoard(new World(), 1, clock);
+        board.FromHost.Send(new byte[300], 0);
+        clock.Advance(1);
+        Assert.Equal(0, board.Receive(new byte[512]));
+        board.FromHost.Send(new byte[200], clock.Seconds);
+        clock.Advance(1);
+        Assert.Equal(200, board.Receive(new byte[512]));
+    }
+
     private string[] Sweep(VirtualBox box)
     {
         using (box)
