@@ -62,7 +62,7 @@ BEGIN {
             print "let ma = mag(i(vsense)) * 1000"
             print "echo \"RESULT drive.current_ma_per_volt.at_hertz_" f[i] " $&ma\""
         }
-        print "tran 2n 60u 53.3333u 2n uic"
+        print "tran 2n 20.0001u 13.3334u 2n uic"
         print "meas tran high max i(vsense)"
         print "meas tran low min i(vsense)"
         print "meas tran rms rms i(vsense)"

@@ -1,3 +1,5 @@
+using Looseloop.Coil;
+
 namespace Looseloop.HardwareNotes.Tests;
 
 /// <summary>The formulas behind the tables, against printed values.</summary>
@@ -43,6 +45,15 @@ public sealed class LoopArithmeticTests
     {
         double expected = LoopArithmetic.Mu0 * Math.PI * 0.01 * 0.0025 * 100 / (2 * Math.Pow(5.0, 3));
         Assert.InRange(LoopArithmetic.RingToCoilH(0.1, 5.0 - 0.005, 0.05, 0.01, 100) / expected, 0.99, 1.01);
+    }
+
+    /// <summary>The project's own coil model has the same formulas in other words.</summary>
+    [Fact]
+    public void The_coil_model_agrees()
+    {
+        Assert.Equal(1, LoopArithmetic.MutualH(0.1, 0.055, 0.15) / Loops.MutualH(0.1, 0.055, 0.15), 1e-9);
+        Assert.Equal(1, LoopArithmetic.RingH(0.1, 0.45e-3) / Loops.SelfH(0.1, 0.45e-3, insideShare: 0), 1e-9);
+        Assert.Equal(1, LoopArithmetic.SheetH(0.055, 0.480, 1000) / CurrentSheet.InductanceH(0.11, 0.480, 1000), 1e-9);
     }
 
     /// <summary>The voltage that the page on the antenna starts from is the one that the loop gives at k = 0.005 and Q = 200.</summary>
