@@ -207,7 +207,7 @@ public static class CoilFile
     {
         foreach ((string path, double tolerance) in coil.Tolerances)
         {
-            Dimension? dimension = Dimension.Find(coil, path);
+            Dimension? dimension = Dimension.Of(coil).FirstOrDefault(d => d.Path == path);
             if (dimension is null)
             {
                 values.Refuse<object>("tolerance." + path, $"this coil has no dimension {path}");

@@ -54,9 +54,31 @@ public sealed record Dimension(string Path, string Name, string Unit, double Val
         return all;
     }
 
-    /// <summary>The dimension of that path, or null.</summary>
+    /// <summary>What may be changed of the primary; empty where there is none.</summary>
+    public static IReadOnlyList<Dimension> OfPrimary(CoilGeometry coil)
+    {
+        if (coil.Primary is not PrimaryGeometry p)
+        {
+            return [];
+        }
+
+        CoilGeometry Replace(PrimaryGeometry other) => coil with { Primary = other };
+        return
+        [
+            Millimetres("primary.inner_diameter_mm", "primary inner diameter", p.InnerDiameterM, m => Replace(p with { InnerDiameterM = m })),
+            new("primary.turns", "primary turns", "", p.Turns, n => Replace(p with { Turns = n })),
+            Millimetres("primary.pitch_mm", "primary pitch", p.PitchM, m => Replace(p with { PitchM = m })),
+            new("primary.slope_deg", "primary slope", "degrees", p.SlopeDegrees, d => Replace(p with { SlopeDegrees = d })),
+            Millimetres("primary.conductor_diameter_mm", "primary conductor", p.ConductorDiameterM, m => Replace(p with { ConductorDiameterM = m })),
+            Millimetres("primary.base_height_mm", "primary height", p.BaseHeightM, m => Replace(p with { BaseHeightM = m })),
+            new("primary.capacitor_nf", "tank capacitor", "nF", (p.CapacitorF ?? double.NaN) * 1e9, c => Replace(p with { CapacitorF = c / 1e9 })),
+            new("primary.bus_voltage_v", "bus voltage", "V", p.BusVoltageV ?? double.NaN, v => Replace(p with { BusVoltageV = v })),
+        ];
+    }
+
+    /// <summary>The dimension of that path, of coil or primary, or null.</summary>
     public static Dimension? Find(CoilGeometry coil, string path) =>
-        Of(coil).FirstOrDefault(d => string.Equals(d.Path, path, StringComparison.Ordinal));
+        Of(coil).Concat(OfPrimary(coil)).FirstOrDefault(d => string.Equals(d.Path, path, StringComparison.Ordinal));
 
     private static void AddLoad(CoilGeometry coil, int i, List<Dimension> all)
     {

@@ -12,5 +12,12 @@ internal static class CommandList
         yield return SurveyCommand.Create(shell);
         yield return FitCommand.Create(shell);
         yield return BoxesCommand.Create(shell);
+        yield return CoilCommand.Create(shell);
+        yield return ExpectCommand.Create(shell);
+        yield return ProbeCommand.Create(shell);
+        yield return TankCommand.Create(shell);
+        yield return WindowCommand.Create(shell);
+        yield return CoupleCommand.Create(shell);
+        yield return PadCommand.Create(shell);
     }
 }
