@@ -187,15 +187,19 @@ public class DrivingTests
         double stray = .5e-6;
         double read = Tank.ResonanceHz(tank.Primary.InductanceH(6) + stray, 20e-9);
         double wanted = Tank.ResonanceHz(tank.Primary.InductanceH(5.25) + stray, 20e-9);
-        TapMove move = tank.MoveFor(read, 6, wanted, 20e-9)!;
-        Assert.Equal(5.25, move.ToTurns, 1e-6);
-        Assert.Equal(stray, move.StrayH, 1e-12);
-        Assert.True(move.AlongM < 0);
-        Assert.Equal("fewer turns", move.Direction);
-        // With no marking the capacitor takes the blame.
-        TapMove other = tank.MoveFor(read, 6, wanted, null)!;
-        Assert.Equal(0, other.StrayH);
-        Assert.InRange(other.ToTurns, 5, 5.5);
+        IReadOnlyList<TapMove> moves = tank.MovesFor(read, 6, wanted, 20e-9);
+        Assert.Equal(2, moves.Count);
+        Assert.Equal(5.25, moves[0].ToTurns, 1e-6);
+        Assert.Equal(stray, moves[0].StrayH, 1e-12);
+        Assert.True(moves[0].AlongM < 0);
+        Assert.Equal("fewer turns", moves[0].Direction);
+        // The other view: the capacitor is larger than marked.
+        Assert.Equal(0, moves[1].StrayH);
+        Assert.True(moves[1].CapacitorF > 20e-9);
+        Assert.InRange(moves[1].ToTurns, 5.25, 5.5);
+        Assert.Single(tank.MovesFor(read, 6, wanted, null));
+        // Higher than reckoned: no leads do that.
+        Assert.Single(tank.MovesFor(Tank.ResonanceHz(tank.Primary.InductanceH(6), 18e-9), 6, wanted, 20e-9));
     }
 
     // Square wave into an inductance: its fundamental is 4/pi of the swing, the triangle's peak V/(4 f L) (textbook).

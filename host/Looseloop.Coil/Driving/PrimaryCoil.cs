@@ -1,12 +1,16 @@
 namespace Looseloop.Coil;
 
 /// <summary>
-/// A primary turn by turn: every turn a loop of round conductor with the current on its skin, a part of a turn an arc. Leads are not
-/// included; half a metre of lead adds some .3 to .5 uH (common practice, no source).
+/// A primary turn by turn: every turn a loop of round conductor with the current on its skin. Between whole turns a winding's
+/// inductance runs smoothly (its end always has the turn before it one pitch away): a cubic through the four nearest whole turns;
+/// within the first turn an arc. Leads are not included; half a metre of lead adds some .3 to .5 uH (common practice, no source).
 /// </summary>
 public sealed class PrimaryCoil
 {
     private readonly PrimaryGeometry _geometry;
+
+    // Inductance of 0, 1, 2 ... whole turns, two beyond what is wound so that the last one can be interpolated too.
+    private readonly double[] _wholeH;
 
     /// <summary>Takes the geometry; refuses impossible ones.</summary>
     public PrimaryCoil(PrimaryGeometry geometry)
@@ -24,6 +28,7 @@ public sealed class PrimaryCoil
         }
 
         _geometry = geometry;
+        _wholeH = WholeTurns((int)Math.Ceiling(geometry.Turns) + 2);
     }
 
     /// <summary>The geometry.</summary>
@@ -33,21 +38,26 @@ public sealed class PrimaryCoil
     /// <param name="turns">Where the tap sits, above 0 and at most the turns that are wound; a fraction is a part of a turn.</param>
     public double InductanceH(double turns)
     {
-        (double Share, double R, double Z)[] loops = LoopsTo(turns);
-        double wire = _geometry.ConductorDiameterM / 2;
-        double sum = 0;
-        for (int i = 0; i < loops.Length; i++)
+        Demand.Within(turns, 1e-3, _geometry.Turns * (1 + 1e-12), nameof(turns), "");
+        int whole = (int)Math.Floor(turns);
+        double part = turns - whole;
+        if (part == 0)
         {
-            (double share, double r, double z) = loops[i];
-            sum += Loops.SelfH(r, wire, 0) * LoopArc.SelfShare(share, wire / r);
-            for (int j = 0; j < i; j++)
-            {
-                // A whole loop and an arc: the arc's share of the whole, by symmetry.
-                sum += 2 * share * loops[j].Share * Loops.MutualH(r, loops[j].R, z - loops[j].Z);
-            }
+            return _wholeH[whole];
         }
 
-        return sum;
+        if (whole == 0)
+        {
+            return _wholeH[1] * LoopArc.SelfShare(part, _geometry.ConductorDiameterM / 2 / _geometry.RadiusM(0.5));
+        }
+
+        // Lagrange's polynomial through whole - 1 .. whole + 2.
+        double a = _wholeH[whole - 1];
+        double b = _wholeH[whole];
+        double c = _wholeH[whole + 1];
+        double d = _wholeH[whole + 2];
+        return (-a * part * (part - 1) * (part - 2) / 6) + (b * (part + 1) * (part - 1) * (part - 2) / 2)
+            - (c * (part + 1) * part * (part - 2) / 2) + (d * (part + 1) * part * (part - 1) / 6);
     }
 
     /// <summary>Mutual inductance of the turns up to a tap with a secondary, its turns taken one by one, henry.</summary>
@@ -97,6 +107,26 @@ public sealed class PrimaryCoil
         }
 
         return sum;
+    }
+
+    private double[] WholeTurns(int count)
+    {
+        double[] sums = new double[count + 1];
+        double wire = _geometry.ConductorDiameterM / 2;
+        for (int i = 0; i < count; i++)
+        {
+            double r = _geometry.RadiusM(i + 0.5);
+            double z = _geometry.HeightM(i + 0.5);
+            double added = Loops.SelfH(r, wire, 0);
+            for (int j = 0; j < i; j++)
+            {
+                added += 2 * Loops.MutualH(r, _geometry.RadiusM(j + 0.5), z - _geometry.HeightM(j + 0.5));
+            }
+
+            sums[i + 1] = sums[i] + added;
+        }
+
+        return sums;
     }
 
     private (double Share, double R, double Z)[] LoopsTo(double turns)

@@ -95,28 +95,33 @@ public sealed class Tank(PrimaryCoil primary, CoilGeometry secondary, double sec
     }
 
     /// <summary>
-    /// Which way and how far to move the tap, from a reading of the tank itself (secondary away or shorted). With the capacitor known,
-    /// what the reading lies below the reckoning is put on stray inductance; a reading above it, or an unknown capacitor, is put on
-    /// the capacitor.
+    /// Which way and how far to move the tap, from a reading of the tank itself (secondary away or shorted): what it lies off the
+    /// reckoning is put on the capacitor's value, or on stray inductance of leads and layout. The truth lies between the two.
     /// </summary>
     /// <param name="readHz">The tank as read.</param>
     /// <param name="tapTurns">Where the tap sat.</param>
     /// <param name="wantedHz">Where it should be.</param>
-    /// <param name="capacitorF">The capacitor's marking, or null.</param>
-    /// <returns>Null where the winding does not reach.</returns>
-    public TapMove? MoveFor(double readHz, double tapTurns, double wantedHz, double? capacitorF)
+    /// <param name="capacitorF">The capacitor's marking, or null: then only the first can be worked out.</param>
+    /// <returns>One or two moves; empty where the winding does not reach.</returns>
+    public IReadOnlyList<TapMove> MovesFor(double readHz, double tapTurns, double wantedHz, double? capacitorF)
     {
         double l = primary.InductanceH(tapTurns);
-        double stray = 0;
-        double c = CapacitorF(readHz, l);
-        if (capacitorF is double marked && InductanceH(readHz, marked) > l)
+        var moves = new List<TapMove>();
+        void Add(double c, double stray)
         {
-            stray = InductanceH(readHz, marked) - l;
-            c = marked;
+            if (TurnsFor(wantedHz, c, stray) is double to)
+            {
+                moves.Add(new TapMove(tapTurns, to, primary.ConductorM(to) - primary.ConductorM(tapTurns), stray, c));
+            }
         }
 
-        return TurnsFor(wantedHz, c, stray) is double to
-            ? new TapMove(tapTurns, to, primary.ConductorM(to) - primary.ConductorM(tapTurns), stray, c)
-            : null;
+        // A reading above the reckoning cannot come from leads.
+        if (capacitorF is double marked && InductanceH(readHz, marked) > l)
+        {
+            Add(marked, InductanceH(readHz, marked) - l);
+        }
+
+        Add(CapacitorF(readHz, l), 0);
+        return moves;
     }
 }

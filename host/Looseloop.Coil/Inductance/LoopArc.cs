@@ -1,8 +1,8 @@
 namespace Looseloop.Coil;
 
 /// <summary>
-/// Part of a turn. Its mutual inductance with whole coaxial loops is its share of the whole turn's, by symmetry; its own is not:
-/// that is Neumann's double integral over the arc.
+/// Part of a turn by itself. Its mutual inductance with whole coaxial loops is its share of the whole turn's, by symmetry; its own
+/// inductance is not: that is Neumann's double integral over the arc.
 /// </summary>
 internal static class LoopArc
 {

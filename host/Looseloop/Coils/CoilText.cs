@@ -31,7 +31,7 @@ internal static class CoilText
         if (coil.Primary is PrimaryGeometry p)
         {
             Row("primary", $"{PrimaryWords(p)}, {Words.Number(p.Turns, 2)} turns from {Mm(p.InnerDiameterM)} mm, pitch {Mm(p.PitchM)} mm, conductor {Mm(p.ConductorDiameterM)} mm, {Mm(p.BaseHeightM)} mm above the ground");
-            Row("driver", $"{(p.CapacitorF is double c ? Words.Nanofarad(c) : "no tank capacitor")}{(p.BusVoltageV is double v ? $", {Words.Digits(v, 4)} V, {(p.FullBridge ? "full" : "half")} bridge" : "")}");
+            Row("driver", $"{(p.CapacitorF is double c ? Words.Nanofarad(c) : "no tank capacitor")}{(p.BusVoltageV is double v ? $", {Words.Plain(v)} V, {(p.FullBridge ? "full" : "half")} bridge" : "")}");
         }
 
         console.Write(grid);
@@ -46,6 +46,7 @@ internal static class CoilText
         json.Figure("turn_pitch_mm", coil.PitchM * 1e3);
         json.Figure("wire_m", WireM(coil));
         json.Figure("wire_direct_ohm", SkinEffect.DirectOhm(WireM(coil), coil.WireDiameterM));
+        json.Objects("top_loads", coil.TopLoads, load => json.WriteString("kind", load.Kind));
         json.Objects("dimensions", Dimension.Of(coil).Concat(Dimension.OfPrimary(coil)).Where(d => double.IsFinite(d.Value)), d =>
         {
             json.WriteString("key", d.Path);

@@ -59,19 +59,19 @@ internal sealed class DimensionSearch(Shell shell, CoilGeometry coil)
             table.Columns[1].RightAligned();
             foreach (SweepRow row in rows)
             {
-                table.AddRow(Words.Digits(row.Value, 6), Words.Number(row.F1Hz / 1e3, 2), Markup.Escape(row.Problem ?? ""));
+                table.AddRow(Words.Plain(row.Value), Words.Number(row.F1Hz / 1e3, 2), Markup.Escape(row.Problem ?? ""));
             }
 
             shell.Out.Write(table);
             BrailleCanvas.Write(
                 shell.Out, [.. rows.Select(r => r.Value)], [.. rows.Select(r => r.F1Hz)], f => Words.Kilohertz(f),
-                Words.Digits(rows[0].Value, 4), Words.Digits(rows[^1].Value, 4) + unit);
+                Words.Plain(rows[0].Value), Words.Plain(rows[^1].Value) + unit);
         }
 
         if (targetHz is double wanted)
         {
             shell.Out.MarkupLineInterpolated(found is double value
-                ? (FormattableString)$"[bold]{dimension.Path} = {Words.Digits(value, 5)}{unit}[/] gives f1 = {Words.Kilohertz(wanted)} (now {Words.Digits(dimension.Value, 5)}{unit})"
+                ? (FormattableString)$"[bold]{dimension.Path} = {Words.Digits(value, 5)}{unit}[/] gives f1 = {Words.Kilohertz(wanted)} (now {Words.Plain(dimension.Value)}{unit})"
                 : $"No {dimension.Path} within reach gives f1 = {Words.Kilohertz(wanted)}; --sweep shows what can be had.");
         }
     }

@@ -46,7 +46,7 @@ internal static class ExpectationText
         {
             string unit = s.Dimension.Unit.Length > 0 ? " " + s.Dimension.Unit : "";
             table.AddRow(
-                Markup.Escape(s.Dimension.Path), Words.Digits(s.Dimension.Value, 5) + unit, Words.Number(s.RelativePerPercent, 3),
+                Markup.Escape(s.Dimension.Path), Words.Plain(s.Dimension.Value) + unit, Words.Number(s.RelativePerPercent, 3),
                 Words.Digits(s.HzPerUnit, 3), $"{Words.Digits(s.Tolerance, 2)}{unit}{(s.Stated ? "" : " (usual)")}", $"{s.UncertaintyHz:0}");
         }
 
@@ -101,7 +101,7 @@ internal static class ExpectationText
         foreach (Cause cause in c.Causes.Where(k => k.CanAccount))
         {
             string unit = cause.Unit.Length > 0 ? " " + cause.Unit : "";
-            table.AddRow(Markup.Escape(cause.Name), Words.Digits(cause.From, 4) + unit, Words.Digits(cause.To, 4) + unit, Markup.Escape(cause.Remark));
+            table.AddRow(Markup.Escape(cause.Name), Words.Plain(cause.From) + unit, Words.Digits(cause.To, 4) + unit, Markup.Escape(cause.Remark));
         }
 
         console.Write(table);

@@ -43,10 +43,11 @@ internal sealed record TankFigures
     /// <summary>The tank's own reading, or null.</summary>
     public FrequencySource? PrimaryReading { get; init; }
 
-    /// <summary>Which way to move the tap after it, for the cold and for the loaded secondary; null where the winding does not reach.</summary>
-    public TapMove? ColdMove { get; init; }
+    /// <summary>Which way to move the tap after it, for the cold secondary; empty where the winding does not reach.</summary>
+    public IReadOnlyList<TapMove> ColdMoves { get; init; } = [];
 
-    public TapMove? LoadedMove { get; init; }
+    /// <summary>The same for the loaded one.</summary>
+    public IReadOnlyList<TapMove> LoadedMoves { get; init; } = [];
 
     public PrimaryGeometry Primary => Coil.Primary!;
 
@@ -67,7 +68,7 @@ internal sealed record TankFigures
             hz, q, Tank.CapacitorF(hz, inductance),
             capacitor is double c ? tank.TurnsFor(hz, c) ?? double.NaN : double.NaN,
             capacitor is null && coil.Primary!.BusVoltageV is double v ? UntunedDrive.Of(inductance, hz, v, coil.Primary.FullBridge, k, q) : null);
-        TapMove? Move(double hz) => primaryReading is null ? null : tank.MoveFor(primaryReading.F0Hz, tap, hz, capacitor);
+        IReadOnlyList<TapMove> Moves(double hz) => primaryReading is null ? [] : tank.MovesFor(primaryReading.F0Hz, tap, hz, capacitor);
         return new TankFigures
         {
             Coil = coil,
@@ -84,8 +85,8 @@ internal sealed record TankFigures
                 : [],
             Split = Coupling.SplitHz(coldHz, coldHz, Math.Min(k, 0.99)),
             PrimaryReading = primaryReading,
-            ColdMove = Move(coldHz),
-            LoadedMove = Move(loadedHz),
+            ColdMoves = Moves(coldHz),
+            LoadedMoves = Moves(loadedHz),
         };
     }
 }

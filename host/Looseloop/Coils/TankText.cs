@@ -50,8 +50,8 @@ internal static class TankText
         json.Figure("bus_voltage_v", t.Primary.BusVoltageV ?? double.NaN);
         json.Figure("split_lower_hz", t.Split.LowerHz);
         json.Figure("split_upper_hz", t.Split.UpperHz);
-        WriteState(json, "cold", t.Cold, t.ColdMove);
-        WriteState(json, "loaded", t.Loaded, t.LoadedMove);
+        WriteState(json, "cold", t.Cold, t.ColdMoves);
+        WriteState(json, "loaded", t.Loaded, t.LoadedMoves);
         json.Figure("primary_read_hz", t.PrimaryReading?.F0Hz ?? double.NaN);
         json.Objects("taps", t.Taps, row =>
         {
@@ -69,7 +69,7 @@ internal static class TankText
         Cautions.Write(json, LoadedState.Caution, Cautions.Hands, Cautions.Energise);
     }
 
-    private static void WriteState(Utf8JsonWriter json, string name, TankState s, TapMove? move)
+    private static void WriteState(Utf8JsonWriter json, string name, TankState s, IReadOnlyList<TapMove> moves)
     {
         json.WriteStartObject(name);
         json.Figure("secondary_hz", s.SecondaryHz);
@@ -85,20 +85,20 @@ internal static class TankText
             json.Figure("power_w", d.PowerW);
         }
 
-        if (move is not null)
+        json.Objects("moves", moves, move =>
         {
-            json.Figure("move_to_turns", move.ToTurns);
-            json.Figure("move_along_mm", move.AlongM * 1e3);
-            json.WriteString("move_direction", move.Direction);
+            json.Figure("to_turns", move.ToTurns);
+            json.Figure("along_mm", move.AlongM * 1e3);
+            json.WriteString("direction", move.Direction);
             json.Figure("stray_h", move.StrayH);
-        }
-
+            json.Figure("capacitor_f", move.CapacitorF);
+        });
         json.WriteEndObject();
     }
 
     private static void WriteDrive(TankFigures t, Action<string, Func<TankState, string>> row)
     {
-        row($"no tank capacitor, {Words.Digits(t.Primary.BusVoltageV!.Value, 4)} V {(t.Primary.FullBridge ? "full" : "half")} bridge:", _ => "");
+        row($"no tank capacitor, {Words.Plain(t.Primary.BusVoltageV!.Value)} V {(t.Primary.FullBridge ? "full" : "half")} bridge:", _ => "");
         row("  reactance of the primary", s => Words.Digits(s.Drive!.ReactanceOhm, 3) + " ohm");
         row("  peak current, no secondary", s => Words.Digits(s.Drive!.TrianglePeakA, 3) + " A");
         row("  Q of the secondary", s => Words.Number(s.SecondaryQ, 0));
@@ -110,18 +110,25 @@ internal static class TankText
     private static void WriteMove(IAnsiConsole console, TankFigures t)
     {
         console.MarkupLineInterpolated($"The tank was read at {Words.Kilohertz(t.PrimaryReading!.F0Hz)} ({t.PrimaryReading.From}), tap at {Words.Number(t.Tap, 2)} turns.");
-        foreach ((string state, TapMove? move) in (ReadOnlySpan<(string, TapMove?)>)[("cold", t.ColdMove), ("loaded", t.LoadedMove)])
+        foreach ((string state, IReadOnlyList<TapMove> moves) in (ReadOnlySpan<(string, IReadOnlyList<TapMove>)>)[("cold", t.ColdMoves), ("loaded", t.LoadedMoves)])
         {
-            if (move is null)
+            if (moves.Count == 0)
             {
                 console.MarkupLineInterpolated($"  {state}: no tap on this winding does it.");
-                continue;
             }
 
-            string stray = move.StrayH > 0
-                ? $"{Words.Henry(move.StrayH)} of leads and layout"
-                : $"a capacitor of {Words.Nanofarad(move.CapacitorF)}";
-            console.MarkupLineInterpolated($"  {state}: [bold]{move.Direction}[/], to {Words.Number(move.ToTurns, 2)}: {Words.Number(Math.Abs(move.AlongM) * 100, 1)} cm along the conductor (the reading implies {stray}).");
+            foreach (TapMove move in moves)
+            {
+                string cause = move.StrayH > 0
+                    ? $"if leads and layout add {Words.Henry(move.StrayH)}"
+                    : $"if the capacitor is {Words.Nanofarad(move.CapacitorF)}";
+                console.MarkupLineInterpolated($"  {state}, {cause}: [bold]{move.Direction}[/], {Words.Number(Math.Abs(move.AlongM) * 100, 1)} cm along the conductor, to {Words.Number(move.ToTurns, 2)}.");
+            }
+        }
+
+        if (t.ColdMoves.Count > 1)
+        {
+            console.MarkupLine("  The truth lies between the two views: move the smaller distance, and read again.");
         }
     }
 

@@ -19,6 +19,9 @@ internal static class Words
     public static string Number(double value, int decimals) =>
         double.IsFinite(value) ? value.ToString("F" + decimals.ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture) : "-";
 
+    /// <summary>As a person would have typed it: six digits at most, no needless zeros.</summary>
+    public static string Plain(double value) => double.IsFinite(value) ? value.ToString("0.######", CultureInfo.InvariantCulture) is { Length: <= 7 } s ? s : Digits(value, 6) : "-";
+
     /// <summary>With so many significant digits.</summary>
     public static string Digits(double value, int digits)
     {

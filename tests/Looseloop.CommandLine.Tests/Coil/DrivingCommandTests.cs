@@ -141,9 +141,12 @@ public class DrivingCommandTests
         using var scene = new CoilScene();
         scene.Keep(215e3, 60, of: "primary");
         JsonElement e = scene.Json("tank", "foyer", "--against", "last", "--record", scene.Record, "--tap", "7.5", "--f0", "268.42k");
-        JsonElement cold = e.GetProperty("cold");
-        Assert.Equal("fewer turns", cold.GetProperty("move_direction").GetString());
-        Assert.True(cold.GetProperty("move_along_mm").GetDouble() < 0);
+        JsonElement moves = e.GetProperty("cold").GetProperty("moves");
+        Assert.Equal(2, moves.GetArrayLength());
+        Assert.All(moves.EnumerateArray(), move => Assert.Equal("fewer turns", move.GetProperty("direction").GetString()));
+        // Put on the capacitor, L must fall as the square of the frequencies: 21.05 uH (215/268.42)^2 = 13.5 uH, six turns and a bit.
+        Assert.InRange(moves[1].GetProperty("to_turns").GetDouble(), 5.95, 6.1);
+        Assert.True(moves[1].GetProperty("along_mm").GetDouble() < 0);
         AppRun text = scene.Run("tank", "foyer", "--against", "215k", "--of", "primary", "--tap", "7.5");
         Assert.Contains("fewer turns", text.Out, StringComparison.Ordinal);
         Assert.Contains("cm along the conductor", text.Out, StringComparison.Ordinal);
