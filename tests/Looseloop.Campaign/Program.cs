@@ -11,11 +11,12 @@ return args switch
         rest.Contains("-v")),
     ["one", string seed, .. string[] rest] => OneWorld.Run(
         ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture), rest.Length > 0 ? Enum.Parse<Defect>(rest[0]) : null),
+    ["ladder", string world, string seed] => Ladders.Show(WorldShelf.Load(world), ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture)),
     _ => Usage(),
 };
 
 static int Usage()
 {
-    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT]");
+    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT] | ladder WORLD SEED");
     return 2;
 }
