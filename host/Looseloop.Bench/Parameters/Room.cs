@@ -57,6 +57,12 @@ public sealed record Carrier
 
     /// <summary>How long it is on in each period, seconds.</summary>
     public double OnS { get; init; }
+
+    /// <summary>It is silent before this time, seconds from the world's begin.</summary>
+    public double FromS { get; init; } = double.NegativeInfinity;
+
+    /// <summary>It is silent from this time on, seconds from the world's begin: an energised run that ends.</summary>
+    public double ToS { get; init; } = double.PositiveInfinity;
 }
 
 /// <summary>Mains hum.</summary>

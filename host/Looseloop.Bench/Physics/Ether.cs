@@ -86,6 +86,11 @@ internal sealed class Ether
     private double Gate(int i, double timeS)
     {
         Carrier carrier = _carriers[i];
+        if (timeS < carrier.FromS || timeS >= carrier.ToS)
+        {
+            return timeS < carrier.FromS || _timeConstantS <= 0 ? 0 : Math.Exp((carrier.ToS - timeS) / _timeConstantS);
+        }
+
         if (carrier.PeriodS <= 0)
         {
             return 1;
