@@ -32,4 +32,7 @@ public enum RunEventKind
 
     /// <summary>A reading was tried and gave none.</summary>
     ReadingFailed = 9,
+
+    /// <summary>f0 and Q at the end of an energised run, extrapolated from the cool-down; From and To are that moment.</summary>
+    AtFieldEnd = 10,
 }
