@@ -16,6 +16,9 @@ public sealed class LogProcedure
     private static readonly TimeSpan _slice = TimeSpan.FromMilliseconds(250);
     private const double JudgeEveryS = 30;
 
+    /// <summary>A shorter wait is none: it would round to nothing and never end.</summary>
+    private const double LeastWaitS = 1e-3;
+
     /// <summary>Overslept by this much (and by more than a reading's spacing), the host was suspended.</summary>
     private const double OversleptS = 5;
 
@@ -112,7 +115,7 @@ public sealed class LogProcedure
         while (true)
         {
             _cancel.ThrowIfCancellationRequested();
-            if (RemainingS() <= 0)
+            if (RemainingS() <= LeastWaitS)
             {
                 return _keeper.Session is null
                     ? (RunStatus.LinkLost, "The time was up while the box was lost.")
@@ -180,7 +183,7 @@ public sealed class LogProcedure
     {
         double endS = _options.For is TimeSpan most ? _startS + most.TotalSeconds : double.PositiveInfinity;
         double untilS = Math.Min(slotS, endS);
-        for (double leftS = untilS - _writer.NowS; leftS > 0; leftS = untilS - _writer.NowS)
+        for (double leftS = untilS - _writer.NowS; leftS > LeastWaitS; leftS = untilS - _writer.NowS)
         {
             _cancel.ThrowIfCancellationRequested();
             UpdateState("waiting");
