@@ -17,7 +17,7 @@ public static class RandomCampaign
     {
         var clock = Stopwatch.StartNew();
         var results = new Result?[worlds];
-        Parallel.For(0, worlds, i => results[i] = One(firstSeed + (ulong)i, only));
+        Parallel.For(0, worlds, new ParallelOptions { MaxDegreeOfParallelism = Environment.ProcessorCount }, i => results[i] = One(firstSeed + (ulong)i, only));
         Result[] done = [.. results.OfType<Result>()];
         Console.WriteLine($"{done.Length} worlds in {clock.Elapsed.TotalSeconds:0} s");
         Console.WriteLine($"{"defect",-20} {"worlds",7} {"sound",7} {"doubtful",9} {"none",6} {"wrong-but-sound",16}  most frequent reasons");
@@ -39,10 +39,10 @@ public static class RandomCampaign
                 Console.WriteLine($"  seed {r.Seed} {r.Defect} f0 {truth.F0Hz:0} Q {truth.Q:0} {r.World.Detector.Kind} ft {r.World.FeedThrough.Fraction:0.00}: z(f0) {r.F0Z:0.0}, z(Q) {r.QZ:0.0}");
             }
 
-            foreach (Result r in done.Where(r => r.Defect == Defect.Nothing && r.Verdict != Verdict.Sound).Take(30))
+            foreach (Result r in done.Where(r => (r.Defect == Defect.Nothing || only is not null) && r.Verdict != Verdict.Sound).Take(30))
             {
                 Truth truth = Truth.Unloaded(r.World);
-                Console.WriteLine($"  seed {r.Seed} clean f0 {truth.F0Hz:0} Q {truth.Q:0} {r.World.Detector.Kind} ft {r.World.FeedThrough.Fraction:0.00} {r.Verdict}: {r.Reasons}");
+                Console.WriteLine($"  seed {r.Seed} {r.Defect} f0 {truth.F0Hz:0} Q {truth.Q:0} {r.World.Detector.Kind} ft {r.World.FeedThrough.Fraction:0.00} {r.Verdict}: {r.Reasons}");
             }
         }
 

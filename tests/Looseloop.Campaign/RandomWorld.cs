@@ -98,9 +98,9 @@ public static class RandomWorld
         Defect.Interrupted => world with { Room = world.Room with { Carriers = [new Carrier { FrequencyHz = f0 * 0.995, Volts = 1, PeriodS = Uniform(random, 0.05, 0.5), OnS = Uniform(random, 0.001, 0.01) }] } },
         Defect.UnevenEdges => world with { Drive = world.Drive with { HighExtraNs = Uniform(random, -150, 150) } },
         Defect.DeadZone => world with { Detector = world.Detector with { PedestalVolts = Uniform(random, 0, 0.13) } },
-        Defect.TightLoop => world with { Loop = world.Loop with { Coupling = LogUniform(random, 0.008, 0.04) } },
-        Defect.ClosePickup => world with { Pickup = world.Pickup with { CouplingPf = LogUniform(random, 0.03, 0.3) } },
-        Defect.PeopleNear => world with { Room = world.Room with { PeoplePf = LogUniform(random, 0.01, 0.3) } },
+        Defect.TightLoop => world with { Loop = world.Loop with { Coupling = LogUniform(random, 0.008, 0.02) } },
+        Defect.ClosePickup => world with { Pickup = world.Pickup with { CouplingPf = LogUniform(random, 0.02, 0.1) } },
+        Defect.PeopleNear => world with { Room = world.Room with { PeoplePf = LogUniform(random, 0.01, 0.1) } },
         Defect.SlowDetector => world with { Detector = world.Detector with { TimeConstantUs = LogUniform(random, 200, 1500) } },
         Defect.ClockOff => world with { Board = world.Board with { ClockPpm = Uniform(random, -60, 60) } },
         Defect.BentConverter => world with { Converter = world.Converter with { BowCounts = Uniform(random, -20, 20), RippleCounts = Uniform(random, 0, 4) } },
@@ -116,16 +116,62 @@ public static class RandomWorld
             Defect.TooWeak => LogUniform(random, 2, 150),
             _ => Uniform(random, 700, 3000),
         };
-        World levelled = PeakLevel.Set(world, counts);
+        double pedestal = world.Detector.PedestalVolts * 4095 / world.Converter.FullScaleVolts;
+        World quiet = world with { Room = world.Room with { Carriers = [], Hum = new MainsHum(), Bursts = new Bursts() } };
+        World levelled = ToLevel(quiet, pedestal + Math.Min(counts, 3000)) with { Room = world.Room };
+        levelled = levelled with { Pickup = levelled.Pickup with { Gain = levelled.Pickup.Gain * Math.Max(counts / 3000, 1) } };
         double carrierCounts = defect switch
         {
             Defect.WeakCarrier => LogUniform(random, 2, 150),
             Defect.Energised or Defect.Interrupted => LogUniform(random, 400, 3000),
             _ => 0,
         };
-        return carrierCounts == 0
-            ? levelled
-            : levelled with { Room = levelled.Room with { Carriers = [.. levelled.Room.Carriers.Select(c => c with { Volts = PeakLevel.InputVolts(levelled, carrierCounts) })] } };
+        return carrierCounts == 0 ? levelled : WithCarrier(levelled, pedestal + carrierCounts);
+    }
+
+    /// <summary>A diode's gain is set at its output, so that its input spans square law to peak; all others' at the buffer.</summary>
+    private static World ToLevel(World world, double counts)
+    {
+        if (world.Detector.Kind != DetectorKind.Diode)
+        {
+            return world.WithPeakCounts(counts);
+        }
+
+        World wide = world with { Detector = world.Detector with { Gain = 30 } };
+        return wide.WithPeakCounts(counts);
+    }
+
+    /// <summary>Sets the carriers' strength so that the level with the drive off is raised to about these counts.</summary>
+    private static World WithCarrier(World world, double counts)
+    {
+        double low = 1e-6;
+        double high = 1e3;
+        for (int i = 0; i < 40; i++)
+        {
+            double volts = Math.Sqrt(low * high);
+            if (CarrierLevel(world, volts) < counts)
+            {
+                low = volts;
+            }
+            else
+            {
+                high = volts;
+            }
+        }
+
+        return world with { Room = world.Room with { Carriers = [.. world.Room.Carriers.Select(carrier => carrier with { Volts = low })] } };
+    }
+
+    private static double CarrierLevel(World world, double volts)
+    {
+        World steady = world with
+        {
+            Room = world.Room with { Carriers = [.. world.Room.Carriers.Select(c => c with { Volts = volts, PeriodS = 0, OnS = 0 })] },
+            Converter = world.Converter with { NoiseCounts = 0 },
+        };
+        var board = new VirtualBoard(steady, 1, new VirtualClock());
+        board.WaitUntilUs(20_000);
+        return board.Read(0);
     }
 
     private static VirtualCoil Coil(Random random, double f0, double q, double f2) => new()

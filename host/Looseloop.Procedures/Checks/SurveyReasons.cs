@@ -7,9 +7,15 @@ namespace Looseloop.Procedures.Checks;
 /// <summary>What a survey holds against a reading.</summary>
 public static class SurveyReasons
 {
-    /// <summary>Why a survey found no f0.</summary>
+    /// <summary>Why a survey gave no f0 to go on with.</summary>
     public static IReadOnlyList<Reason> WhyNoF0(SurveyResult survey, ReadOptions options)
     {
+        if (survey.Saturated)
+        {
+            int top = survey.Raw.Max(point => point.Max);
+            return [new Reason(ReasonCode.Saturated, $"The survey reaches {top} counts, the end of the converter's or the detector's range: what it found cannot be told apart.")];
+        }
+
         string range = $"{options.LowHz / 1000:0.#} to {options.HighHz / 1000:0.#} kHz";
         var reasons = survey.Responses.Where(response => response.Kind == ResponseKind.Ghost)
             .Select(ghost => new Reason(

@@ -20,9 +20,6 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     /// <summary>Ring times until what is left of the own ring is below a thousandth of a count.</summary>
     private const double RingsToDie = 15;
 
-    /// <summary>Half the span of a quick look about a frequency that was given, as a share of it.</summary>
-    private const double NearShare = 0.05;
-
     private readonly DetectorScale _scale = new(options.Law);
 
     /// <summary>Reads.</summary>
@@ -34,13 +31,20 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         DarkLevel look;
         if (options.NearHz is double near)
         {
-            (aboutHz, look) = LookNear(near);
+            NearLook.Result found = NearLook.Run(box, options.Law, near, watch, cancel);
+            look = found.Look;
+            if (found.Response.Kind != ResponseKind.F0)
+            {
+                return Nothing(null, look, [NearLook.WhyNot(found.Response)], found.Points);
+            }
+
+            aboutHz = found.Response.FrequencyHz;
         }
         else
         {
             survey = SurveyProcedure.Run(box, options.Law, options.LowHz, options.HighHz, watch, cancel);
             look = survey.Look;
-            if (survey.F0 is null)
+            if (survey.F0 is null || survey.Saturated)
             {
                 return Nothing(survey, look, SurveyReasons.WhyNoF0(survey, options), []);
             }
@@ -60,16 +64,6 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         return Judge(measurement);
     }
 
-    /// <summary>A sweep of the settings within 5 % of a frequency: where the largest is, a reading begins.</summary>
-    private (double AboutHz, DarkLevel Look) LookNear(double nearHz)
-    {
-        watch.Begin($"looking about {nearHz / 1000:0.0} kHz", 0.3);
-        (IReadOnlyList<RawPoint> raw, DarkLevel look) = SurveySweep.Run(
-            box, options.Law, Math.Max(nearHz * (1 - NearShare), box.Identity.LowestHz), Math.Min(nearHz * (1 + NearShare), box.Identity.HighestHz),
-            0.5, NoWatch.Instance, cancel);
-        return (raw.Count > 0 ? raw.MaxBy(point => point.Mean).Setting.FrequencyHz : nearHz, look);
-    }
-
     private Measurement Measure(TargetSearch.Result search, SurveyResult? survey)
     {
         Target target = search.Target!;
@@ -81,7 +75,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             new SweepRequest(plan.Settings, plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs, ThereAndBack = true },
             cancel: cancel);
         watch.Begin("looking again at another duty and after a longer dwell", boardSeconds * 0.8);
-        double otherDuty = target.Duty < 0.5 ? Math.Min(target.Duty * 1.5, 0.5) : 1 / 3.0;
+        double otherDuty = OtherDuty(target.Duty);
         SweepResult other = box.Sweep(
             new SweepRequest([.. plan.Settings.Select(s => SettingGrid.WithDuty(s, otherDuty))], plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs },
             cancel: cancel);
@@ -120,6 +114,14 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             Saturated = search.Saturated,
         };
     }
+
+    /// <summary>1/2 beside 1/3, whose third harmonics differ most; beside a duty that was lowered for the level, a lower one.</summary>
+    private static double OtherDuty(double duty) => duty switch
+    {
+        >= 0.45 => 1 / 3.0,
+        >= 0.3 => 0.5,
+        _ => duty * 2 / 3,
+    };
 
     /// <summary>Dark after the own ring has died, over whole mains periods.</summary>
     private DarkLevel QuietDark(Target target)

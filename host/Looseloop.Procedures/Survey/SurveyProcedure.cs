@@ -9,6 +9,9 @@ public static class SurveyProcedure
 {
     private const int MostResponses = 10;
 
+    /// <summary>Above this share of its range a converter, or the detector before it, may be at its end.</summary>
+    private const double SaturatedShare = 0.92;
+
     /// <summary>How far from a response its echoes are found, as a share of its frequency.</summary>
     private const double EchoReach = 0.05;
 
@@ -34,7 +37,8 @@ public static class SurveyProcedure
             watch.Progress((double)++looked / maxima.Count);
         }
 
-        return new SurveyResult(raw, points, look, ResponseNaming.Name(findings), maxima.Count > 0 && maxima[0].AtEdge);
+        bool saturated = raw.Any(point => point.Max > SaturatedShare * box.Identity.FullCounts);
+        return new SurveyResult(raw, points, look, ResponseNaming.Name(findings), maxima.Count > 0 && maxima[0].AtEdge, saturated);
     }
 
     /// <summary>
@@ -55,9 +59,10 @@ public static class SurveyProcedure
 /// <param name="Look">The dark level before it.</param>
 /// <param name="Responses">What stands out, ascending in frequency, each named.</param>
 /// <param name="LargestAtEdge">True if the largest lies at the edge of the range.</param>
+/// <param name="Saturated">True if some level was at the end of the range: names are then worth nothing.</param>
 public sealed record SurveyResult(
     IReadOnlyList<RawPoint> Raw, IReadOnlyList<SurveyPoint> Points, DarkLevel Look, IReadOnlyList<Response> Responses,
-    bool LargestAtEdge)
+    bool LargestAtEdge, bool Saturated)
 {
     /// <summary>The coil's own f0 among them, or null.</summary>
     public Response? F0 => Responses.FirstOrDefault(response => response.Kind == ResponseKind.F0);

@@ -19,9 +19,17 @@ public static class BudgetMaker
     private const double F0PpmPerK = 40;
     private const double QPerK = 0.002;
 
-    /// <summary>What loop, pickup, box and people pull where no standoff was taken: relative, as half-widths of rectangles.</summary>
-    private const double UnmeasuredPull = 1.5e-3;
-    private const double UnmeasuredQLoss = 0.04;
+    /// <summary>
+    /// What pickup, box and people add to the coil where no standoff was taken: up to 0.1 pF on the 12 pF of a small coil,
+    /// of which f0 takes half (df/f = -dC/2C); the half-width of a rectangle.
+    /// </summary>
+    private const double UnmeasuredPull = 4.2e-3;
+
+    /// <summary>
+    /// What a loop takes from the coil where no standoff was taken: coupling up to this, the loop's reactance equal to its
+    /// resistance at worst, so 1/Q grows by k^2/2 (reflected impedance, Terman, Radio Engineers' Handbook, 1943, from memory).
+    /// </summary>
+    private const double UnmeasuredCoupling = 0.02;
 
     /// <summary>Curvature of a detector that no ladder has read: share of the peak by which the middle of its range may bow.</summary>
     private const double UnreadBow = 0.01;
@@ -52,7 +60,7 @@ public static class BudgetMaker
             : new("clock", fit.F0Hz * UntrimmedPpm * 1e-6 / root3, 0, false, double.PositiveInfinity, "never trimmed: +-40 ppm"));
         lines.Add(m.Options.Pull is Pull pull
             ? new("pull", fit.F0Hz * pull.F0Uncertainty, pull.LossUncertainty * fit.Q, false, double.PositiveInfinity, "standoff")
-            : new("pull", fit.F0Hz * UnmeasuredPull / root3, UnmeasuredQLoss / root3, false, double.PositiveInfinity, "no standoff: loop, pickup, box and people"));
+            : new("pull", fit.F0Hz * UnmeasuredPull / root3, UnmeasuredCoupling * UnmeasuredCoupling / 2 * fit.Q / root3, false, double.PositiveInfinity, "no standoff: up to 0.1 pF, loop up to k = 0.02"));
         lines.Add(new("temperature", fit.F0Hz * F0PpmPerK * 1e-6 * TemperatureK, QPerK * TemperatureK, false, double.PositiveInfinity, "+-0.5 K of coil and room"));
         return new Budget(lines);
     }
