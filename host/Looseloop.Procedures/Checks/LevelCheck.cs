@@ -24,9 +24,11 @@ public static class LevelCheck
             yield return new Reason(ReasonCode.BelowRange, "Samples read zero: the pedestal is inside the converter's dead zone.");
         }
 
-        double sigma = Math.Sqrt(measurement.FitPoints.Average(point => point.Variance));
-        double ratio = measurement.Fit.PeakAmplitude / (sigma * Math.Sqrt(measurement.Plan.Samples));
-        if (measurement.Fit.PeakAmplitude / sigma < LeastPeakToNoise)
+        // Of the points near the top, where every detector's noise is known best.
+        double peak = measurement.FitPoints.Max(point => point.Amplitude);
+        double sigma = Math.Sqrt(measurement.FitPoints.Where(point => point.Amplitude > peak / 2).Average(point => point.Variance));
+        double ratio = peak / (sigma * Math.Sqrt(measurement.Plan.Samples));
+        if (peak / sigma < LeastPeakToNoise)
         {
             yield return new Reason(ReasonCode.TooLittleSignal, $"The peak is only {ratio:0.0} times the noise of a sample.");
         }

@@ -16,7 +16,9 @@ public static class RepeatCheck
             yield return new Reason(ReasonCode.Drift, $"The way back read otherwise than the way there: {drift}.");
         }
 
-        if (Differ(measurement.Fit, measurement.OtherDutyFit, 0.02, 0.015) is string duty)
+        // Beside a vernier the fundamental's settings alone may be too few to tell anything.
+        bool tells = !measurement.Plan.UsesVernier || (measurement.OtherDutyFit.IsFitted && measurement.OtherDutyFit.QRelativeStandard < 0.1);
+        if (tells && Differ(measurement.Fit, measurement.OtherDutyFit, 0.02, 0.015) is string duty)
         {
             yield return new Reason(ReasonCode.HarmonicsAtDetector, $"At duty {measurement.OtherDuty:0.00} it reads otherwise: {duty}.");
         }

@@ -6,7 +6,11 @@ namespace Looseloop.Procedures.Detector;
 /// <param name="Raw">The point.</param>
 /// <param name="Amplitude">Amplitude with the dark power taken off, counts of a linear detector; may be negative in noise.</param>
 /// <param name="Variance">Variance of that, same unit squared, above 0.</param>
-public readonly record struct AmplitudePoint(RawPoint Raw, double Amplitude, double Variance);
+public readonly record struct AmplitudePoint(RawPoint Raw, double Amplitude, double Variance)
+{
+    /// <summary>Variance of the power where the output is power itself, unit to the fourth; NaN otherwise.</summary>
+    public double PowerVariance { get; init; } = double.NaN;
+}
 
 /// <summary>Turns raw points into amplitudes: pedestal off at the output, law, then noise and carriers off as power.</summary>
 public sealed class AmplitudeMaker
@@ -42,6 +46,10 @@ public sealed class AmplitudeMaker
 
         // Rounding averages out only where the scatter is at least half a count (Widrow and Kollar, Quantization Noise, 2008).
         double meanVariance = (variance / raw.Samples) + (variance < 0.3 ? SampleStatistics.QuantisationVariance : 0);
-        return new AmplitudePoint(raw, amplitude, slope * slope * meanVariance);
+        double reference = _scale.Law.ReferenceCounts;
+        return new AmplitudePoint(raw, amplitude, slope * slope * meanVariance)
+        {
+            PowerVariance = _scale.Law.Kind == DetectorKind.SquareLaw ? meanVariance * reference * reference : double.NaN,
+        };
     }
 }

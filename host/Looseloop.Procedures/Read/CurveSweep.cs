@@ -25,7 +25,24 @@ public static class CurveSweep
     public static int DwellUs(Target target, DetectorLaw law, double rings = RingsInOrder) =>
         (int)Math.Min(1e6 * rings * (target.RingTimeS + law.TimeConstantS), LongestDwellUs);
 
-    /// <summary>Raw points as the fit takes them, each with the variance that its own samples show.</summary>
-    public static FitPoint[] FitPoints(IEnumerable<RawPoint> raw, AmplitudeMaker maker) =>
-        [.. raw.Select(point => maker.Make(point)).Select(made => new FitPoint(made.Raw.Setting.FrequencyHz, made.Amplitude, made.Variance))];
+    /// <summary>
+    /// Raw points as the fit takes them, each with the variance that its own samples show. Drive weights come from the true
+    /// duty, so amplitudes are those at duty 1/2 whatever the duty was.
+    /// </summary>
+    /// <param name="raw">The points.</param>
+    /// <param name="maker">Law and zero.</param>
+    /// <param name="harmonics">Which harmonic each setting uses; null for all fundamental.</param>
+    public static FitPoint[] FitPoints(
+        IEnumerable<RawPoint> raw, AmplitudeMaker maker, IReadOnlyDictionary<Setting, int>? harmonics = null) =>
+        [.. raw.Select(point => FitPointOf(maker.Make(point), harmonics?[point.Setting] ?? 1))];
+
+    private static FitPoint FitPointOf(AmplitudePoint made, int harmonic)
+    {
+        Setting setting = made.Raw.Setting;
+        return new FitPoint(
+            harmonic * setting.FrequencyHz, made.Amplitude, made.Variance, harmonic / 2, DutyHarmonics.DriveWeight(harmonic, setting.Duty))
+        {
+            PowerVariance = made.PowerVariance,
+        };
+    }
 }

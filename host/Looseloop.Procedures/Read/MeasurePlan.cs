@@ -1,49 +1,170 @@
 using Looseloop.Box;
+using Looseloop.Procedures.Detector;
 using Looseloop.Readings;
+using Looseloop.Resonance;
 
 namespace Looseloop.Procedures.Read;
 
 /// <summary>Where a reading's points lie once f0 and Q are known about, and how each is sampled.</summary>
-/// <param name="Settings">Ascending.</param>
+/// <param name="Settings">In the order of the sweep; a setting that deserves more samples stands there more than once.</param>
+/// <param name="Harmonics">Which harmonic of the drive each setting uses: 1, or 3 and 5 for vernier settings.</param>
 /// <param name="DwellUs">Dwell before each, microseconds.</param>
-/// <param name="Samples">Samples at each.</param>
+/// <param name="Samples">Samples at each visit.</param>
 /// <param name="SpacingUs">Microseconds from sample to sample; samples times spacing is a whole mains period.</param>
-public sealed record MeasurePlan(IReadOnlyList<Setting> Settings, int DwellUs, int Samples, int SpacingUs)
+public sealed record MeasurePlan(
+    IReadOnlyList<Setting> Settings, IReadOnlyDictionary<Setting, int> Harmonics, int DwellUs, int Samples, int SpacingUs)
 {
     private const int SamplesAMainsPeriod = 100;
+    private const int MostVisits = 6;
 
-    /// <summary>Dense within this, bandwidths.</summary>
-    private const double Dense = 1.6;
+    /// <summary>Time on air of a reading, seconds; more where a ring is long.</summary>
+    private const double OnAirS = 0.9;
 
-    /// <summary>Points within the dense part at most.</summary>
-    private const int MostDense = 13;
+    /// <summary>What a point costs beside dwell and samples: the timer, and its line of text.</summary>
+    private const double PointS = 0.006;
 
-    /// <summary>Detunings beyond the dense part that pin the feed-through, bandwidths.</summary>
-    private static readonly double[] _far = [2.2, 3.2, 4.6, 6.5];
+    /// <summary>Vernier settings are driven at this duty, where the third and fifth harmonics are strongest.</summary>
+    private const double VernierDuty = 0.5;
 
-    /// <summary>Plans for a target.</summary>
-    public static MeasurePlan For(BoxSession box, Target target, DetectorLaw law, double mainsHz)
+    /// <summary>How far from f0 settings are offered to the design, bandwidths.</summary>
+    private const double MostReach = 8;
+    private const double LeastReach = 2.2;
+
+    /// <summary>
+    /// Nor farther than this share of f0: over a wide span the loop's prefactor, a feed-through that changes with frequency
+    /// and the overtones' tails bend the curve.
+    /// </summary>
+    private const double ReachShare = 0.06;
+
+    /// <summary>Detunings, bandwidths, where at least one setting stands on either side, so that the model can be doubted.</summary>
+    private static readonly double[] _doubting = [1.3, 2.1];
+
+    /// <summary>Below this duty the level was too high for the converter; a vernier at 1/2 might be again.</summary>
+    private const double LeastDutyForVernier = 0.3;
+
+    /// <summary>True if vernier settings are among them.</summary>
+    public bool UsesVernier => Harmonics.Values.Any(harmonic => harmonic > 1);
+
+    /// <summary>Settings that drive the coil by their fundamental, each once, ascending.</summary>
+    public IReadOnlyList<Setting> Fundamental =>
+        [.. Settings.Where(setting => Harmonics[setting] == 1).Distinct().OrderBy(setting => setting.FrequencyHz)];
+
+    /// <summary>Plans for a target by the Fisher information of the settings that the box can make.</summary>
+    /// <param name="box">The box.</param>
+    /// <param name="search">What is known so far.</param>
+    /// <param name="maker">The detector's law and zero.</param>
+    /// <param name="mainsHz">Mains frequency, hertz.</param>
+    public static MeasurePlan For(BoxSession box, TargetSearch.Result search, AmplitudeMaker maker, double mainsHz)
     {
-        SettingGrid grid = box.Grid;
-        double stepHz = TargetSearch.StepHz(grid, target.F0Hz);
-        double reachHz = Math.Max(Dense * target.BandwidthHz, 2.5 * stepHz);
-        int stride = (int)Math.Max(1, Math.Round(2 * reachHz / (MostDense * stepHz)));
-        int eachSide = (int)Math.Ceiling(reachHz / (stride * stepHz));
-        var settings = CurveSweep.About(grid, target.F0Hz, eachSide, stride, target.Duty).ToDictionary(s => s.FrequencyHz);
-        foreach (double far in _far)
+        Target target = search.Target!;
+        DetectorLaw law = maker.Scale.Law;
+        int spacingUs = (int)Math.Round(1e6 / mainsHz / SamplesAMainsPeriod);
+        int dwellUs = CurveSweep.DwellUs(target, law);
+        bool vernier = law.RespondsToPower && target.Duty >= LeastDutyForVernier;
+        double visitS = (2e-6 * (dwellUs + (SamplesAMainsPeriod * spacingUs))) + (2 * PointS);
+        var request = new PlanRequest
         {
-            foreach (int side in (int[])[-1, 1])
+            Estimate = CurveEstimate.From(search.Fit),
+            F0StandardHz = Math.Min(search.Fit.F0StandardHz, target.BandwidthHz / 3),
+            QRelativeStandard = Math.Min(search.Fit.QRelativeStandard, 0.3),
+            Noise = NoiseOf(search, maker),
+            Fundamental = Around(box, target, 1, target.Duty),
+            Third = vernier ? Around(box, target, 3, VernierDuty) : [],
+            Fifth = vernier ? Around(box, target, 5, VernierDuty) : [],
+            DetectorTimeS = law.TimeConstantS,
+            SampleS = spacingUs * 1e-6,
+            PointS = PointS,
+            TimeS = Math.Max(OnAirS, 9 * visitS),
+            LeastSamples = SamplesAMainsPeriod,
+            ReachBandwidths = Reach(target),
+        };
+        SweepPlan? designed = SweepDesigner.Design(request);
+        return designed is null
+            ? Even(box, target, dwellUs, spacingUs)
+            : Of(box, target, designed, dwellUs, spacingUs);
+    }
+
+    private static double Reach(Target target) => Math.Clamp(ReachShare * target.Q, LeastReach, MostReach);
+
+    private static MeasurePlan Of(BoxSession box, Target target, SweepPlan designed, int dwellUs, int spacingUs)
+    {
+        var settings = new List<Setting>();
+        var harmonics = new Dictionary<Setting, int>();
+        foreach (IGrouping<Setting, PlannedPoint> visits in designed.Points.GroupBy(point => point.Setting))
+        {
+            PlannedPoint point = visits.First();
+            if (!IsInside(box, point.Setting))
             {
-                // By the exact detuning f/f0 - f0/f, so that a low Q does not reach below zero.
-                double half = side * far / (2 * target.Q);
-                Setting setting = grid.Nearest(target.F0Hz * (half + Math.Sqrt(1 + (half * half))), target.Duty);
-                settings[setting.FrequencyHz] = setting;
+                continue;
+            }
+
+            int times = Math.Clamp((int)Math.Round((double)visits.Sum(visit => visit.Samples) / (2 * SamplesAMainsPeriod)), 1, MostVisits);
+            settings.AddRange(Enumerable.Repeat(point.Setting, times));
+            harmonics[point.Setting] = point.Harmonic;
+        }
+
+        foreach (double side in _doubting.SelectMany(u => new[] { -u, u }))
+        {
+            double wantedHz = target.F0Hz + (side * target.BandwidthHz);
+            bool there = settings.Any(s => harmonics[s] == 1 && (s.FrequencyHz - target.F0Hz) / (wantedHz - target.F0Hz) > 0.9);
+            Setting setting = box.Grid.Nearest(wantedHz, target.Duty);
+            if (!there && IsInside(box, setting) && harmonics.TryAdd(setting, 1))
+            {
+                settings.Add(setting);
             }
         }
 
-        int spacingUs = (int)Math.Round(1e6 / mainsHz / SamplesAMainsPeriod);
         return new MeasurePlan(
-            [.. settings.Values.Where(s => s.FrequencyHz >= box.Identity.LowestHz && s.FrequencyHz <= box.Identity.HighestHz).OrderBy(s => s.FrequencyHz)],
-            CurveSweep.DwellUs(target, law), SamplesAMainsPeriod, spacingUs);
+            [.. settings.OrderBy(setting => harmonics[setting]).ThenBy(setting => setting.FrequencyHz)], harmonics, dwellUs, SamplesAMainsPeriod, spacingUs);
+    }
+
+    /// <summary>Where nothing can be designed (too few settings, or no idea of the noise): evenly over the curve.</summary>
+    private static MeasurePlan Even(BoxSession box, Target target, int dwellUs, int spacingUs)
+    {
+        const int Points = 17;
+        Setting[] all = [.. Around(box, target, 1, target.Duty)];
+        int stride = Math.Max(1, all.Length / Points);
+        Setting[] settings = [.. all.Where((_, i) => i % stride == 0)];
+        return new MeasurePlan(settings, settings.ToDictionary(setting => setting, _ => 1), dwellUs, SamplesAMainsPeriod, spacingUs);
+    }
+
+    /// <summary>Settings whose harmonic falls within reach of f0: every one, or strided where the curve is wide.</summary>
+    private static IReadOnlyList<Setting> Around(BoxSession box, Target target, int harmonic, double duty)
+    {
+        const int Most = 60;
+
+        // By the exact detuning f/f0 - f0/f = 2u/Q, so that a low Q does not reach below zero.
+        double half = Reach(target) / target.Q;
+        double ratio = half + Math.Sqrt(1 + (half * half));
+        double lowHz = Math.Max(target.F0Hz / ratio / harmonic, box.Identity.LowestHz);
+        double highHz = Math.Min(target.F0Hz * ratio / harmonic, box.Identity.HighestHz);
+        if (lowHz >= highHz)
+        {
+            return [];
+        }
+
+        IReadOnlyList<Setting> all = box.Grid.Between(lowHz, highHz, duty);
+        int stride = (all.Count + Most - 1) / Most;
+        return stride <= 1 ? all : [.. all.Where((_, i) => i % stride == 0)];
+    }
+
+    private static bool IsInside(BoxSession box, Setting setting) =>
+        setting.FrequencyHz >= box.Identity.LowestHz && setting.FrequencyHz <= box.Identity.HighestHz;
+
+    /// <summary>The noise of one sample, constant in the detector's output, over the peak amplitude at drive weight 1.</summary>
+    private static NoiseLaw NoiseOf(TargetSearch.Result search, AmplitudeMaker maker)
+    {
+        double[] variances = [.. search.Points.Select(point => point.SampleVariance).Where(double.IsFinite).Order()];
+        double sigma = variances.Length == 0 ? 1 : Math.Sqrt(variances[variances.Length / 2]);
+        DetectorLaw law = maker.Scale.Law;
+        double peak = Math.Sqrt(search.Fit.PeakPower);
+        double rawAtPeak = maker.Scale.Counts(peak);
+        double amplitudeSigma = sigma * maker.Scale.Slope(rawAtPeak);
+        return law.Kind switch
+        {
+            DetectorKind.SquareLaw => NoiseLaw.ConstantInPower(2 * amplitudeSigma / peak),
+            DetectorKind.RmsLog or DetectorKind.LogOfWaveform => new NoiseLaw(0, 0, amplitudeSigma / peak),
+            _ => NoiseLaw.ConstantInAmplitude(amplitudeSigma / peak),
+        };
     }
 }

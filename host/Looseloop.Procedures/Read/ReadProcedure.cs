@@ -68,16 +68,17 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     {
         Target target = search.Target!;
         DarkLevel before = QuietDark(target);
-        MeasurePlan plan = MeasurePlan.For(box, target, options.Law, options.MainsHz);
+        MeasurePlan plan = MeasurePlan.For(box, search, new AmplitudeMaker(_scale, before.Mean), options.MainsHz);
         double boardSeconds = plan.Settings.Count * 2e-6 * (plan.DwellUs + (plan.Samples * plan.SpacingUs));
-        watch.Begin($"measuring {plan.Settings.Count} settings there and back", boardSeconds * 1.8);
+        string vernier = plan.UsesVernier ? ", vernier settings among them" : "";
+        watch.Begin($"measuring {plan.Settings.Distinct().Count()} settings there and back{vernier}", boardSeconds * 1.8);
         SweepResult sweep = box.Sweep(
             new SweepRequest(plan.Settings, plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs, ThereAndBack = true },
             cancel: cancel);
         watch.Begin("looking again at another duty and after a longer dwell", boardSeconds * 0.8);
         double otherDuty = OtherDuty(target.Duty);
         SweepResult other = box.Sweep(
-            new SweepRequest([.. plan.Settings.Select(s => SettingGrid.WithDuty(s, otherDuty))], plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs },
+            new SweepRequest([.. plan.Fundamental.Select(s => SettingGrid.WithDuty(s, otherDuty))], plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs },
             cancel: cancel);
         Setting[] flanks = Flanks(plan, target);
         SweepResult longer = box.Sweep(
@@ -85,7 +86,12 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         DarkLevel after = QuietDark(target);
 
         var maker = new AmplitudeMaker(_scale, (before.Mean + after.Mean) / 2);
-        FitPoint[] points = CurveSweep.FitPoints(sweep.Points, maker);
+        EdgeWeight edges = plan.UsesVernier ? Edges(sweep.Points, other.Points, plan, maker) : EdgeWeight.None;
+        FitPoint[] points =
+        [
+            .. CurveSweep.FitPoints(sweep.Points, maker, plan.Harmonics)
+                .Select(point => point.Group == 0 ? point with { DriveWeight = point.DriveWeight * edges.Factor } : point),
+        ];
         var declared = new FitOptions { PrefactorExponent = options.PrefactorExponent, F0GuessHz = target.F0Hz, QGuess = target.Q };
         var fitter = new ResonanceFitter(Math.Max(points.Length, 16));
         ResonanceFit fit = fitter.Fit(points, declared);
@@ -107,6 +113,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             Back = fitter.Fit(points.AsSpan(half), declared),
             OtherDutyFit = fitter.Fit(CurveSweep.FitPoints(other.Points, maker), declared),
             OtherDuty = otherDuty,
+            Edges = edges,
             DwellPairs = Pair(sweep.Points, longer.Points, maker),
             DarkBefore = before,
             DarkAfter = after,
@@ -135,8 +142,13 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     private static Setting[] Flanks(MeasurePlan plan, Target target)
     {
         double[] at = [-1, -0.4, 0, 0.4, 1];
-        return [.. at.Select(u => plan.Settings.MinBy(s => Math.Abs(s.FrequencyHz - target.F0Hz - (u * target.BandwidthHz)))).Distinct()];
+        return [.. at.Select(u => plan.Fundamental.MinBy(s => Math.Abs(s.FrequencyHz - target.F0Hz - (u * target.BandwidthHz)))).Distinct()];
     }
+
+    /// <summary>Against vernier settings only the drive's true strength at this duty will do.</summary>
+    private static EdgeWeight Edges(
+        IReadOnlyList<RawPoint> points, IReadOnlyList<RawPoint> other, MeasurePlan plan, AmplitudeMaker maker) => EdgeWeight.Of(
+            points.Where(point => plan.Harmonics[point.Setting] == 1).Select(point => maker.Make(point)), other.Select(point => maker.Make(point)));
 
     private static List<(AmplitudePoint First, AmplitudePoint Longer)> Pair(
         IReadOnlyList<RawPoint> points, IReadOnlyList<RawPoint> longer, AmplitudeMaker maker)
@@ -164,7 +176,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         {
             F0Hz = figures ? fit.F0Hz * clock * (1 - pull) : double.NaN,
             Q = figures ? 1 / ((1 / fit.Q) - (options.Pull?.LossAdded ?? 0)) : double.NaN,
-            PeakCounts = figures ? fit.PeakAmplitude / Math.Sin(Math.PI * measurement.Target.Duty) : double.NaN,
+            PeakCounts = figures ? fit.PeakAmplitude : double.NaN,
             FeedThrough = figures ? fit.FeedThrough.Ratio : double.NaN,
         };
         return new ReadOutcome(reading, fit, measurement.FitPoints, measurement.Survey);

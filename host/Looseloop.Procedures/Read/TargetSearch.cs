@@ -31,7 +31,8 @@ public static class TargetSearch
     /// <param name="Outcome">How the last fit ended.</param>
     /// <param name="Saturated">True if the converter is at its upper end even at the lowest duty.</param>
     /// <param name="Points">The points of the last sweep.</param>
-    public sealed record Result(Target? Target, FitOutcome Outcome, bool Saturated, IReadOnlyList<RawPoint> Points);
+    /// <param name="Fit">The last fit, amplitudes over drive weights.</param>
+    public sealed record Result(Target? Target, FitOutcome Outcome, bool Saturated, IReadOnlyList<RawPoint> Points, ResonanceFit Fit);
 
     /// <summary>Searches.</summary>
     /// <param name="box">The box.</param>
@@ -72,7 +73,7 @@ public static class TargetSearch
                     continue;
                 }
 
-                return new Result(null, fit.Outcome, saturated, points);
+                return new Result(null, fit.Outcome, saturated, points, fit);
             }
 
             double q = Math.Clamp(fit.Q, 3, 5000);
@@ -84,7 +85,7 @@ public static class TargetSearch
             }
         }
 
-        return new Result(target, fit.Outcome, saturated, points);
+        return new Result(target, fit.Outcome, saturated, points, fit);
     }
 
     /// <summary>The grid's step near a frequency, hertz.</summary>

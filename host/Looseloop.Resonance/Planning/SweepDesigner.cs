@@ -122,6 +122,11 @@ public static class SweepDesigner
                 }
             }
 
+            if (least < 0)
+            {
+                return null;
+            }
+
             weights.Shares[least] = 0;
             used--;
             double fewer = Cost(weights.Improve(PruningTurns), request, used, visitS);
