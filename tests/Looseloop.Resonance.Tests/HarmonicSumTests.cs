@@ -56,9 +56,23 @@ public sealed class HarmonicSumTests(ITestOutputHelper output)
         }
 
         ResonanceFit fit = ResonanceFitter.FitOnce([.. points], new FitOptions());
+        ResonanceFit reversed = ResonanceFitter.FitOnce([.. points.AsEnumerable().Reverse()], new FitOptions());
         Assert.True(fit.IsFitted);
+        Assert.Equal(fit.ConstantPower, reversed.ConstantPower, 1e-8);
         Assert.Equal(1, fit.Q / Q, 3e-4);
         Assert.Equal(0, (fit.F0Hz - F0) / (F0 / Q), 3e-4);
+    }
+
+    [Fact]
+    public void Duty_does_not_change_the_feed_through_by_name()
+    {
+        // The same coil at duty 1/3, told its drive weight: peak and feed-through stay what they are at weight 1.
+        double weight = DutyHarmonics.DriveWeight(1, 1.0 / 3);
+        FitPoint[] points = [.. TestCurves.Grid(41, 4, F0, Q).Select(f =>
+            new FitPoint(f, weight * TestCurves.Amplitude(f, F0, Q, 1, 0.1, 120), double.NaN, 0, weight))];
+        ResonanceFit fit = ResonanceFitter.FitOnce(points, new FitOptions());
+        Assert.Equal(0.01, fit.ConstantPower, 1e-6);
+        Assert.Equal(1, new[] { fit.FeedThrough.Amplitude, fit.FeedThrough.OtherAmplitude }.MinBy(a => Math.Abs(a - 1)), 1e-5);
     }
 
     /// <summary>Mean square of the pickup over one period, over that of the fundamental at duty 1/2 on resonance.</summary>

@@ -48,6 +48,9 @@ internal sealed class FitData
 
     public double HighestHz { get; private set; }
 
+    /// <summary>Mean square of the first group's drive weights: what its constant power belongs to.</summary>
+    public double FirstGroupDrive2 { get; private set; }
+
     /// <summary>Reference of the prefactor, hertz.</summary>
     public double ReferenceHz { get; private set; }
 
@@ -129,8 +132,7 @@ internal sealed class FitData
     private bool TryCopy(ReadOnlySpan<FitPoint> points, in FitOptions options)
     {
         LargestAmplitude = 0;
-        Array.Fill(_groupOf, -1);
-        GroupCount = 0;
+        Array.Clear(_groupOf);
         double sumHz = 0;
         for (int i = 0; i < Count; i++)
         {
@@ -142,23 +144,34 @@ internal sealed class FitData
                 return false;
             }
 
-            if (_groupOf[point.Group] < 0)
-            {
-                _groupOf[point.Group] = GroupCount++;
-            }
-
+            _groupOf[point.Group] = 1;
             FrequencyHz[i] = point.FrequencyHz;
             Amplitude[i] = point.Amplitude;
             Power[i] = point.Amplitude * Math.Abs(point.Amplitude);
-            Group[i] = _groupOf[point.Group];
             LargestAmplitude = Math.Max(LargestAmplitude, Math.Abs(point.Amplitude));
             sumHz += point.FrequencyHz;
         }
 
+        // Groups in use, numbered without gaps in their own order: the first is that of the plain points.
+        GroupCount = 0;
+        for (int g = 0; g < _groupOf.Length; g++)
+        {
+            _groupOf[g] = _groupOf[g] == 1 ? GroupCount++ : -1;
+        }
+
         ReferenceHz = sumHz / Count;
+        int first = 0;
+        FirstGroupDrive2 = 0;
         for (int i = 0; i < Count; i++)
         {
             double drive2 = points[i].DriveWeight * points[i].DriveWeight;
+            Group[i] = _groupOf[points[i].Group];
+            if (Group[i] == 0)
+            {
+                first++;
+                FirstGroupDrive2 += (drive2 - FirstGroupDrive2) / first;
+            }
+
             Drive2[i] = options.PrefactorExponent == 0
                 ? drive2
                 : drive2 * Math.Pow(FrequencyHz[i] / ReferenceHz, 2 * options.PrefactorExponent);

@@ -27,7 +27,7 @@ internal static class FitSummary
         double prefactor = options.PrefactorExponent == 0 ? 1 : Math.Pow(f0 / data.ReferenceHz, 2 * options.PrefactorExponent);
         double peak = best[2] * prefactor;
         double interference = background ? best[3] * prefactor : 0;
-        double constant = background ? best[4] : 0;
+        double constant = background ? best[4] / data.FirstGroupDrive2 : 0;
         FeedThrough feedThrough = FeedThrough.FromInvariants(peak + constant, interference, constant);
         double amplitude = (feedThrough.Amplitude + feedThrough.OtherAmplitude) / 2;
         FitOutcome outcome =

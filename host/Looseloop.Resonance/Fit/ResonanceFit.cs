@@ -57,13 +57,16 @@ public readonly record struct ResonanceFit()
     /// <summary>Interference of resonance and feed-through, n1.</summary>
     public double Interference { get; init; } = double.NaN;
 
-    /// <summary>Constant power of the first group, n2; may be negative within noise.</summary>
+    /// <summary>Constant power of the lowest group for drive weight 1, n2; may be negative within noise.</summary>
     public double ConstantPower { get; init; } = double.NaN;
 
     /// <summary>Standard uncertainty of <see cref="PeakPower"/>.</summary>
     public double PeakPowerStandard { get; init; } = double.NaN;
 
-    /// <summary>The feed-through by name; from the first group.</summary>
+    /// <summary>
+    /// The feed-through by name, from the lowest group. Its constant also holds what the feed-through passes of the drive's
+    /// harmonics: for a square wave the in-phase part is an upper bound.
+    /// </summary>
     public FeedThrough FeedThrough { get; init; } = FeedThrough.Unknown;
 
     /// <summary>Peak amplitude of the resonance itself, the two possible values' mean.</summary>

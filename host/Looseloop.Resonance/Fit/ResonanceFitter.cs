@@ -59,7 +59,7 @@ public sealed partial class ResonanceFitter
     /// </summary>
     public ReadOnlySpan<double> NormalizedResiduals => _scratch.AsSpan(0, _data.Count);
 
-    /// <summary>Constant powers of the groups of the last fit, in order of their first point.</summary>
+    /// <summary>Constant powers of the groups of the last fit, as driven, in rising order of the groups that were used.</summary>
     public ReadOnlySpan<double> ConstantPowers =>
         _data.Background == BackgroundModel.None ? [] : _best.AsSpan(4, _data.GroupCount);
 
