@@ -73,6 +73,17 @@ public class DrivingTests
         Assert.Equal(1, upper / x[1], 1e-9);
     }, iter: 50);
 
+    // Exact two-mesh model of a shorted loop at k = .03, .015, .0075: regressed on k^2 (that is, on (A/Q)^2), the intercept is the
+    // uncoupled frequency within .05 ppm. A short is a circuit tuned to nothing: the first frequency goes to zero.
+    [Fact]
+    public void Readings_with_a_shorted_loop_extrapolate_to_none()
+    {
+        double[] k = [.03, .015, .0075];
+        (double intercept, double _) = MathNet.Numerics.Fit.Line(
+            [.. k.Select(x => x * x)], [.. k.Select(x => (Coupling.SplitHz(1, 250e3, x).UpperHz / 250e3) - 1)]);
+        Assert.Equal(0, intercept * 1e6, .05);
+    }
+
     // With 5 pF on 16 pF a frequency error is amplified 8.4 times (C, and L through the second), 6.4 times (L through the first).
     [Fact]
     public void Pad_amplifies_errors_as_known()

@@ -32,4 +32,15 @@ public class FieldTimingTests(ITestOutputHelper output)
         Assert.True(small < 60, $"n = 200 took {small:F1} ms");
         Assert.True(large < 3000, $"n = 1000 took {large:F0} ms");
     }
+
+    // 8 (N^2 + n^2) bytes, as the model states, and the vectors of the iteration on top.
+    [Fact]
+    public void A_thousand_bands_take_17_megabytes()
+    {
+        long before = GC.GetAllocatedBytesForCurrentThread();
+        ModeSolver.Lowest(new FieldModel(SampleCoil.Loaded, new Resolution(1000, 64, true)), 1);
+        double megabytes = (GC.GetAllocatedBytesForCurrentThread() - before) / 1e6;
+        output.WriteLine($"{megabytes:F1} MB");
+        Assert.InRange(megabytes, 17.0, 20.0);
+    }
 }

@@ -18,11 +18,11 @@ public sealed record Coupling(double K, double Uncertainty)
     public static Coupling FromOpenAndShorted(
         double openHz, double shortedHz, double openUncertaintyHz, double shortedUncertaintyHz, double correlation = 0)
     {
-        Demand.Frequency(openHz, nameof(openHz));
-        Demand.Frequency(shortedHz, nameof(shortedHz));
-        Demand.Uncertainty(openUncertaintyHz, nameof(openUncertaintyHz));
-        Demand.Uncertainty(shortedUncertaintyHz, nameof(shortedUncertaintyHz));
-        Demand.Within(correlation, -1, 1, nameof(correlation), "");
+        Demand.Frequency(openHz, "the open reading");
+        Demand.Frequency(shortedHz, "the shorted reading");
+        Demand.Uncertainty(openUncertaintyHz, "the uncertainty of the open reading");
+        Demand.Uncertainty(shortedUncertaintyHz, "the uncertainty of the shorted reading");
+        Demand.Within(correlation, -1, 1, "the correlation", "");
         if (shortedHz <= openHz)
         {
             throw new ArgumentException(
@@ -43,8 +43,8 @@ public sealed record Coupling(double K, double Uncertainty)
     /// <param name="upperHz">The upper peak.</param>
     public static double FromEqualSplit(double lowerHz, double upperHz)
     {
-        Demand.Frequency(lowerHz, nameof(lowerHz));
-        Demand.Frequency(upperHz, nameof(upperHz));
+        Demand.Frequency(lowerHz, "the lower peak");
+        Demand.Frequency(upperHz, "the upper peak");
         if (upperHz <= lowerHz)
         {
             throw new ArgumentException("the upper peak must lie above the lower one");
@@ -64,9 +64,9 @@ public sealed record Coupling(double K, double Uncertainty)
     /// <param name="k">Coupling, 0 .. below 1.</param>
     public static (double LowerHz, double UpperHz) SplitHz(double firstHz, double secondHz, double k)
     {
-        Demand.Frequency(firstHz, nameof(firstHz));
-        Demand.Frequency(secondHz, nameof(secondHz));
-        Demand.Within(k, 0, 0.999999, nameof(k), "");
+        Demand.Frequency(firstHz, "the first frequency");
+        Demand.Frequency(secondHz, "the second frequency");
+        Demand.Within(k, 0, 0.999999, "the coupling", "");
         double a = firstHz * firstHz;
         double b = secondHz * secondHz;
         double root = Math.Sqrt(((a - b) * (a - b)) + (4 * k * k * a * b));

@@ -34,9 +34,9 @@ public sealed record DetuningWindow(double LowerHz, double UpperHz)
     /// <summary>Fraction of the amplitude left at a frequency, exact form.</summary>
     public static double AmplitudeAt(double f0Hz, double q, double driveHz)
     {
-        Demand.Frequency(f0Hz, nameof(f0Hz));
-        Demand.Frequency(driveHz, nameof(driveHz));
-        Demand.Quality(q, nameof(q));
+        Demand.Frequency(f0Hz, "f0");
+        Demand.Frequency(driveHz, "the drive frequency");
+        Demand.Quality(q, "Q");
         double d = q * ((driveHz / f0Hz) - (f0Hz / driveHz));
         return 1 / Math.Sqrt(1 + (d * d));
     }
@@ -53,8 +53,8 @@ public sealed record DetuningWindow(double LowerHz, double UpperHz)
     /// <param name="isResonant">True for an LC oscillator, false for an RC one.</param>
     public static double OscillatorShiftHz(double oscillatorHz, double componentRelative, bool isResonant)
     {
-        Demand.Frequency(oscillatorHz, nameof(oscillatorHz));
-        Demand.Within(componentRelative, -0.99, 100, nameof(componentRelative), "");
+        Demand.Frequency(oscillatorHz, "the oscillator's frequency");
+        Demand.Within(componentRelative, -0.99, 100, "the component's tolerance", "");
         double factor = 1 / (1 + componentRelative);
         return oscillatorHz * ((isResonant ? Math.Sqrt(factor) : factor) - 1);
     }
@@ -67,8 +67,8 @@ public sealed record DetuningWindow(double LowerHz, double UpperHz)
     /// <param name="timeConstantS">tau, seconds.</param>
     public double? LeavesAfterS(double driftHz, double timeConstantS)
     {
-        Demand.Within(driftHz, -1e9, 1e9, nameof(driftHz), "Hz");
-        Demand.Within(timeConstantS, 1e-3, 1e9, nameof(timeConstantS), "s");
+        Demand.Within(driftHz, -1e9, 1e9, "the drift", "Hz");
+        Demand.Within(timeConstantS, 1e-3, 1e9, "the time constant", "s");
         // The resonance has moved by -d (1 - exp(-t/tau)); the driver then stands on the other side of it.
         double centre = Math.Sqrt(LowerHz * UpperHz);
         double room = driftHz > 0 ? UpperHz - centre : centre - LowerHz;
@@ -78,9 +78,9 @@ public sealed record DetuningWindow(double LowerHz, double UpperHz)
 
     private static double Relative(double f0Hz, double q, double fraction)
     {
-        Demand.Frequency(f0Hz, nameof(f0Hz));
-        Demand.Quality(q, nameof(q));
-        Demand.Within(fraction, 1e-6, 1 - 1e-9, nameof(fraction), "");
+        Demand.Frequency(f0Hz, "f0");
+        Demand.Quality(q, "Q");
+        Demand.Within(fraction, 1e-6, 1 - 1e-9, "the fraction of the amplitude", "");
         return Math.Sqrt((1 / (fraction * fraction)) - 1) / q;
     }
 }

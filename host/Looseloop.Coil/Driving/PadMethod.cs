@@ -45,12 +45,12 @@ public sealed record PadMethod
     public static PadMethod Of(
         double firstHz, double firstPadF, double secondHz, double secondPadF, double relativeUncertaintyF0, double padUncertaintyF)
     {
-        Demand.Frequency(firstHz, nameof(firstHz));
-        Demand.Frequency(secondHz, nameof(secondHz));
-        Demand.Within(firstPadF, 0, 1e-6, nameof(firstPadF), "F");
-        Demand.Within(secondPadF, 1e-15, 1e-6, nameof(secondPadF), "F");
-        Demand.Within(relativeUncertaintyF0, 0, 1, nameof(relativeUncertaintyF0), "");
-        Demand.Uncertainty(padUncertaintyF, nameof(padUncertaintyF));
+        Demand.Frequency(firstHz, "the first frequency");
+        Demand.Frequency(secondHz, "the second frequency");
+        Demand.Within(firstPadF, 0, 1e-6, "the first capacitor", "F");
+        Demand.Within(secondPadF, 1e-15, 1e-6, "the second capacitor", "F");
+        Demand.Within(relativeUncertaintyF0, 0, 1, "the relative uncertainty", "");
+        Demand.Uncertainty(padUncertaintyF, "the capacitor's uncertainty");
         if (secondPadF <= firstPadF || secondHz >= firstHz)
         {
             throw new ArgumentException("the reading with the larger capacitor must be the lower one: check which reading is which");

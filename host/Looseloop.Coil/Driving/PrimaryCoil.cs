@@ -38,7 +38,7 @@ public sealed class PrimaryCoil
     /// <param name="turns">Where the tap sits, above 0 and at most the turns that are wound; a fraction is a part of a turn.</param>
     public double InductanceH(double turns)
     {
-        Demand.Within(turns, 1e-3, _geometry.Turns * (1 + 1e-12), nameof(turns), "");
+        Demand.Within(turns, 1e-3, _geometry.Turns * (1 + 1e-12), "the tap", "");
         int whole = (int)Math.Floor(turns);
         double part = turns - whole;
         if (part == 0)
@@ -87,12 +87,12 @@ public sealed class PrimaryCoil
 
     /// <summary>k = M / sqrt(Lp Ls), both inductances at direct current.</summary>
     public double CouplingTo(CoilGeometry secondary, double turns, double secondaryInductanceH) =>
-        MutualH(secondary, turns) / Math.Sqrt(InductanceH(turns) * Demand.Inductance(secondaryInductanceH, nameof(secondaryInductanceH)));
+        MutualH(secondary, turns) / Math.Sqrt(InductanceH(turns) * Demand.Inductance(secondaryInductanceH, "the secondary's inductance"));
 
     /// <summary>Where the tap must sit for an inductance; null where the winding has too few turns for it.</summary>
     public double? TurnsForInductance(double inductanceH)
     {
-        Demand.Inductance(inductanceH, nameof(inductanceH));
+        Demand.Inductance(inductanceH, "the inductance");
         double least = Math.Min(0.05, _geometry.Turns / 2);
         return Root.Bracketed(n => InductanceH(n) - inductanceH, least, _geometry.Turns);
     }
@@ -131,7 +131,7 @@ public sealed class PrimaryCoil
 
     private (double Share, double R, double Z)[] LoopsTo(double turns)
     {
-        Demand.Within(turns, 1e-3, _geometry.Turns * (1 + 1e-12), nameof(turns), "");
+        Demand.Within(turns, 1e-3, _geometry.Turns * (1 + 1e-12), "the tap", "");
         var loops = new (double, double, double)[(int)Math.Ceiling(turns - 1e-9)];
         for (int i = 0; i < loops.Length; i++)
         {

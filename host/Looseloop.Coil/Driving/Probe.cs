@@ -9,9 +9,9 @@ public static class Probe
     /// <param name="addedF">The probe with its lead, farad; 0 or more.</param>
     public static double WouldReadHz(double frequencyHz, double topCapacitanceF, double addedF)
     {
-        Demand.Frequency(frequencyHz, nameof(frequencyHz));
-        Demand.Capacitance(topCapacitanceF, nameof(topCapacitanceF));
-        Demand.Within(addedF, 0, 1, nameof(addedF), "F");
+        Demand.Frequency(frequencyHz, "the frequency");
+        Demand.Capacitance(topCapacitanceF, "the coil's own capacitance");
+        Demand.Within(addedF, 0, 1, "the added capacitance", "F");
         return frequencyHz * Math.Sqrt(topCapacitanceF / (topCapacitanceF + addedF));
     }
 
@@ -20,8 +20,8 @@ public static class Probe
     /// <param name="withHz">The reading with it.</param>
     public static double AddedOverOwn(double withoutHz, double withHz)
     {
-        Demand.Frequency(withoutHz, nameof(withoutHz));
-        Demand.Frequency(withHz, nameof(withHz));
+        Demand.Frequency(withoutHz, "the frequency without it");
+        Demand.Frequency(withHz, "the frequency with it");
         double ratio = withoutHz / withHz;
         return (ratio * ratio) - 1;
     }
@@ -32,9 +32,9 @@ public static class Probe
     /// <param name="heightM">Its height above the plane, metres; more than its radius.</param>
     public static double LeadF(double lengthM, double diameterM, double heightM)
     {
-        Demand.Length(lengthM, nameof(lengthM));
-        Demand.Length(diameterM, nameof(diameterM));
-        Demand.Within(heightM, 0.5001 * diameterM, Demand.LongestM, nameof(heightM), "m");
+        Demand.Length(lengthM, "the length");
+        Demand.Length(diameterM, "the diameter");
+        Demand.Within(heightM, 0.5001 * diameterM, Demand.LongestM, "the height", "m");
         return 2 * Math.PI * PhysicalConstants.Epsilon0 * lengthM / Math.Acosh(2 * heightM / diameterM);
     }
 }

@@ -32,29 +32,29 @@ public sealed class Tank(PrimaryCoil primary, CoilGeometry secondary, double sec
     /// <summary>The capacitor for a frequency and an inductance, farad: 1/((2 pi f)^2 L) (Thomson).</summary>
     public static double CapacitorF(double frequencyHz, double inductanceH)
     {
-        double w = 2 * Math.PI * Demand.Frequency(frequencyHz, nameof(frequencyHz));
-        return 1 / (w * w * Demand.Inductance(inductanceH, nameof(inductanceH)));
+        double w = 2 * Math.PI * Demand.Frequency(frequencyHz, "the frequency");
+        return 1 / (w * w * Demand.Inductance(inductanceH, "the inductance"));
     }
 
     /// <summary>The inductance for a frequency and a capacitor, henry.</summary>
     public static double InductanceH(double frequencyHz, double capacitorF)
     {
-        double w = 2 * Math.PI * Demand.Frequency(frequencyHz, nameof(frequencyHz));
-        return 1 / (w * w * Demand.Capacitance(capacitorF, nameof(capacitorF)));
+        double w = 2 * Math.PI * Demand.Frequency(frequencyHz, "the frequency");
+        return 1 / (w * w * Demand.Capacitance(capacitorF, "the capacitor"));
     }
 
     /// <summary>Resonance of an inductance with a capacitor, hertz.</summary>
     public static double ResonanceHz(double inductanceH, double capacitorF) =>
         1 / (2 * Math.PI * Math.Sqrt(
-            Demand.Inductance(inductanceH, nameof(inductanceH)) * Demand.Capacitance(capacitorF, nameof(capacitorF))));
+            Demand.Inductance(inductanceH, "the inductance") * Demand.Capacitance(capacitorF, "the capacitor")));
 
     /// <summary>The tap table for a capacitor: every whole turn, or finer.</summary>
     /// <param name="capacitorF">The tank's capacitor.</param>
     /// <param name="stepTurns">Between two rows, .01 or more.</param>
     public IReadOnlyList<TapRow> TapTable(double capacitorF, double stepTurns)
     {
-        Demand.Capacitance(capacitorF, nameof(capacitorF));
-        Demand.Within(stepTurns, 0.01, 100, nameof(stepTurns), "");
+        Demand.Capacitance(capacitorF, "the capacitor");
+        Demand.Within(stepTurns, 0.01, 100, "the step", "");
         var rows = new List<TapRow>();
         double wound = primary.Geometry.Turns;
         for (int i = 1; i * stepTurns <= wound * (1 + 1e-12); i++)
@@ -89,7 +89,7 @@ public sealed class Tank(PrimaryCoil primary, CoilGeometry secondary, double sec
     /// <param name="strayH">Inductance of leads and layout, henry.</param>
     public double? TurnsFor(double frequencyHz, double capacitorF, double strayH = 0)
     {
-        Demand.Within(strayH, 0, 1, nameof(strayH), "H");
+        Demand.Within(strayH, 0, 1, "the stray inductance", "H");
         double wanted = InductanceH(frequencyHz, capacitorF) - strayH;
         return wanted <= 1e-12 ? null : primary.TurnsForInductance(wanted);
     }

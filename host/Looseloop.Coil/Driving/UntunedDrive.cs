@@ -38,11 +38,11 @@ public sealed record UntunedDrive
     public static UntunedDrive Of(
         double inductanceH, double frequencyHz, double busVoltageV, bool fullBridge, double k, double secondaryQ)
     {
-        Demand.Inductance(inductanceH, nameof(inductanceH));
-        Demand.Frequency(frequencyHz, nameof(frequencyHz));
-        Demand.Within(busVoltageV, 1e-3, 1e6, nameof(busVoltageV), "V");
-        Demand.Within(k, 0, 0.999, nameof(k), "");
-        Demand.Quality(secondaryQ, nameof(secondaryQ));
+        Demand.Inductance(inductanceH, "the inductance");
+        Demand.Frequency(frequencyHz, "the frequency");
+        Demand.Within(busVoltageV, 1e-3, 1e6, "the bus voltage", "V");
+        Demand.Within(k, 0, 0.999, "the coupling", "");
+        Demand.Quality(secondaryQ, "the secondary's Q");
         double swing = fullBridge ? busVoltageV : busVoltageV / 2;
         double x = 2 * Math.PI * frequencyHz * inductanceH;
         double fundamental = 4 / Math.PI * swing;

@@ -1,5 +1,6 @@
 using Looseloop.Coil;
 using Looseloop.Rendering;
+using Looseloop.Report.Plots;
 using Looseloop.Terminal;
 using Spectre.Console;
 
@@ -63,9 +64,10 @@ internal sealed class DimensionSearch(Shell shell, CoilGeometry coil)
             }
 
             shell.Out.Write(table);
-            BrailleCanvas.Write(
-                shell.Out, [.. rows.Select(r => r.Value)], [.. rows.Select(r => r.F1Hz)], f => Words.Kilohertz(f),
-                Words.Plain(rows[0].Value), Words.Plain(rows[^1].Value) + unit);
+            if (rows.Count(r => double.IsFinite(r.F1Hz)) > 1)
+            {
+                shell.Out.Write(new BrailleCanvas(Sheet(dimension, rows), 10));
+            }
         }
 
         if (targetHz is double wanted)
@@ -75,6 +77,10 @@ internal sealed class DimensionSearch(Shell shell, CoilGeometry coil)
                 : $"No {dimension.Path} within reach gives f1 = {Words.Kilohertz(wanted)}; --sweep shows what can be had.");
         }
     }
+
+    private PlotSheet Sheet(Dimension dimension, IReadOnlyList<SweepRow> rows) => new(
+        coil.Name, dimension.Unit.Length > 0 ? $"{dimension.Name} in {dimension.Unit}" : dimension.Name, "f1 in kHz",
+        [new PlotSeries("expected f1", [.. rows.Select(r => r.Value)], [.. rows.Select(r => r.F1Hz / 1e3)], SeriesLook.Line)]);
 
     private void WriteJson(Dimension dimension, IReadOnlyList<SweepRow> rows, double? targetHz, double? found) =>
         shell.OutText.WriteLine(JsonText.Object(json =>

@@ -1,5 +1,5 @@
 using Looseloop.Coil;
-using Looseloop.Rendering;
+using Looseloop.Report.Plots;
 using Spectre.Console;
 
 namespace Looseloop.Coils;
@@ -70,7 +70,9 @@ internal static class ExpectationText
         }
 
         console.Write(table);
-        BrailleCanvas.Write(console, [.. mode.HeightM.Select(h => h * 1e3)], mode.Voltage, v => Words.Number(v, 2), "base", "top");
+        console.Write(new BrailleCanvas(
+            new PlotSheet("voltage along the winding", "height in mm", "voltage over the top's",
+                [new PlotSeries("f1", [.. mode.HeightM.Select(h => h * 1e3)], mode.Voltage, SeriesLook.Line)]), 10));
     }
 
     public static void WriteComparison(IAnsiConsole console, CoilExpectation e, Comparison c, FrequencySource source)

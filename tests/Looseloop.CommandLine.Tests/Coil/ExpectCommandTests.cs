@@ -87,7 +87,7 @@ public class ExpectCommandTests
         Assert.Equal(250e3, there, 1.0);
         AppRun text = scene.Run("expect", "foyer", "--sweep", "top_load.major_diameter_mm=250..400:50", "--target", "250k");
         Assert.Contains("gives f1", text.Out, StringComparison.Ordinal);
-        Assert.Contains(text.Out, c => c is >= '\u2801' and <= '\u28ff');
+        Assert.Contains("expected f1", text.Out, StringComparison.Ordinal);
         Assert.Equal(1, scene.Run("expect", "foyer", "--target", "30k", "--vary", "top_load.height_mm").ExitCode);
     }
 
