@@ -38,7 +38,7 @@ public static class ReasonText
         ReasonCode.GridTooCoarse => (Verdict.Doubtful, "Use vernier settings or the ring-down: this Q is too high for the settings near f0."),
         ReasonCode.CouplingTooTight => (Verdict.Doubtful, "Move the loop away until the amplitude has halved, and read again."),
         ReasonCode.RingDisagrees => (Verdict.Doubtful, "Move loop and pickup away and read again; where the two still differ, trust neither."),
-        ReasonCode.RingTooShort => (Verdict.Doubtful, "Use the sweep's Q: the ring is over before the detector can follow it."),
+        ReasonCode.RingTooShort => (Verdict.Sound, "Use the sweep's Q: the ring is over before the detector can follow it."),
         ReasonCode.PointsMissing => (Verdict.Doubtful, "Check the cable, and read again."),
         ReasonCode.TooFewPoints => (Verdict.None, "Take more points, most of them within two bandwidths of the peak."),
         ReasonCode.FitFailed => (Verdict.None, "Look at the points: they do not have the shape of a resonance."),
