@@ -18,6 +18,7 @@ public sealed class PseudoTerminal : IByteDuplex
     private readonly SafeFileHandle _wakeReader;
     private readonly SafeFileHandle _wakeWriter;
     private long _droppedBytes;
+    private bool _hostHasStopped;
     private int _closed;
 
     /// <summary>Makes a raw pseudo-terminal that no host has opened yet.</summary>
@@ -76,10 +77,12 @@ public sealed class PseudoTerminal : IByteDuplex
         long lastTaken = TimeProvider.System.GetTimestamp();
         while (!bytes.IsEmpty)
         {
-            TimeSpan left = _writePatience - TimeProvider.System.GetElapsedTime(lastTaken);
-            int events = left > TimeSpan.Zero ? WaitFor(Posix.Writable, left) : Posix.HungUp;
-            if ((events & Posix.HungUp) != 0)
+            TimeSpan left = _hostHasStopped ? TimeSpan.Zero : _writePatience - TimeProvider.System.GetElapsedTime(lastTaken);
+            int events = WaitFor(Posix.Writable, left);
+            if ((events & Posix.HungUp) != 0 || (events == 0 && left <= TimeSpan.Zero))
             {
+                // Once is enough to wait: a box must not stand still at each line for a host that has stopped reading.
+                _hostHasStopped = (events & Posix.HungUp) == 0;
                 Interlocked.Add(ref _droppedBytes, bytes.Length);
                 return;
             }
@@ -91,6 +94,7 @@ public sealed class PseudoTerminal : IByteDuplex
                 {
                     bytes = bytes[count..];
                     lastTaken = TimeProvider.System.GetTimestamp();
+                    _hostHasStopped = false;
                 }
             }
         }

@@ -43,6 +43,34 @@ public sealed class PseudoTerminalTests
     }
 
     [LinuxFact]
+    public void A_host_that_stops_reading_holds_the_box_up_once()
+    {
+        using var box = new PseudoTerminal();
+        using FileStream host = OpenRaw(box);
+        long started = Stopwatch.GetTimestamp();
+        for (int i = 0; i < 200; i++)
+        {
+            box.Write(new byte[1000]);
+        }
+
+        Assert.InRange(Stopwatch.GetElapsedTime(started).TotalSeconds, 0.9, 10);
+        Assert.InRange(box.DroppedBytes, 100_000, 200_000);
+
+        // What it did take is still there, and once it reads again it is served again.
+        long dropped = box.DroppedBytes;
+        byte[] buffer = new byte[4096];
+        long left = 200_000 - dropped;
+        while (left > 0)
+        {
+            left -= host.Read(buffer);
+        }
+
+        box.Write("again"u8);
+        Assert.Equal("again"u8.ToArray(), buffer[..host.Read(buffer)]);
+        Assert.Equal(dropped, box.DroppedBytes);
+    }
+
+    [LinuxFact]
     public void A_host_that_comes_back_is_heard()
     {
         using var box = new PseudoTerminal();
