@@ -28,13 +28,16 @@ internal sealed class BoxKeeper(IBoxSource source, LogOptions options, LogState 
     /// <summary>The box as it last identified itself.</summary>
     public BoxIdentity? Known { get; private set; }
 
-    /// <summary>Opens the box for the first time.</summary>
-    public void Begin()
+    /// <summary>Opens the box for the first time and sets its interlock by its detector's law.</summary>
+    public DetectorLaw Begin()
     {
         _link = source.Open();
         Session = BoxSession.Open(_link, options.Patience, cancel);
         Known = Session.Identity;
+        DetectorLaw law = options.LawOf?.Invoke(Session) ?? options.Read.Law;
+        Interlock.Set(Session, law);
         _limits = Session.Limits();
+        return law;
     }
 
     /// <summary>The exchange with the box went wrong: asks it who it is, on the same link.</summary>

@@ -1,12 +1,17 @@
+using Looseloop.Box;
 using Looseloop.Procedures.Read;
+using Looseloop.Readings;
 
 namespace Looseloop.Procedures.Logging;
 
 /// <summary>What a log is told beforehand.</summary>
 public sealed record LogOptions
 {
-    /// <summary>How readings are taken; its clock is the source's.</summary>
+    /// <summary>How readings are taken; the log puts the source's clock in.</summary>
     public required ReadOptions Read { get; init; }
+
+    /// <summary>Says the detector's law once the box has identified itself; null where <see cref="Read"/> has the right one.</summary>
+    public Func<BoxSession, DetectorLaw>? LawOf { get; init; }
 
     /// <summary>From reading to reading; zero for one after the other.</summary>
     public TimeSpan Every { get; init; } = TimeSpan.FromSeconds(10);

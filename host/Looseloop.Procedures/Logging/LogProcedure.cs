@@ -23,13 +23,14 @@ public sealed class LogProcedure
     private const double OversleptS = 5;
 
     private readonly LogOptions _options;
-    private readonly ReadOptions _read;
+    private readonly TimeProvider _time;
     private readonly ILogWatch _watch;
     private readonly CancellationToken _cancel;
     private readonly LogState _state = new();
     private readonly BoxKeeper _keeper;
     private readonly RunWriter _writer;
-    private readonly Tracker _tracker;
+    private ReadOptions _read;
+    private Tracker _tracker;
     private double _startS;
     private double _lastFullS = double.NegativeInfinity;
     private double _lastJudgedS = double.NegativeInfinity;
@@ -44,7 +45,8 @@ public sealed class LogProcedure
     public LogProcedure(IBoxSource source, LogOptions options, IRunSink sink, ILogWatch watch, CancellationToken cancel)
     {
         _options = options;
-        _read = options.Read with { Time = source.Time };
+        _time = source.Time;
+        _read = options.Read with { Time = _time };
         _watch = watch;
         _cancel = cancel;
         _keeper = new BoxKeeper(source, options, _state, cancel);
@@ -60,7 +62,8 @@ public sealed class LogProcedure
     {
         try
         {
-            _keeper.Begin();
+            _read = _options.Read with { Time = _time, Law = _keeper.Begin() };
+            _tracker = new Tracker(_read);
             _writer.Start(_options, _keeper.Known!);
             _startS = _writer.NowS;
             return RunToEnd();
@@ -96,6 +99,11 @@ public sealed class LogProcedure
         try
         {
             FinishCoolDown();
+            if (_state.Last is Reading last)
+            {
+                _settling = Judge(last);
+            }
+
             UpdateState("done");
             RunStop stop = _writer.Stop(status, reason, _state);
             var summary = new LogSummary(stop, _state, _settling, _lastFieldEnd);

@@ -48,7 +48,7 @@ internal static class BoxChoice
     /// <summary>Opens and identifies the box that was chosen.</summary>
     public static ChosenBox Open(Shell shell, ParseResult parsed)
     {
-        string name = parsed.GetValue(BoxOption) ?? shell.Environment(Variable) ?? OnlyPort();
+        string name = NameOf(shell, parsed);
         World? world = WorldOf(name);
         IByteLink link = world is null ? OpenPort(name) : new VirtualBox(world, parsed.GetValue(SeedOption));
         TextWriter? trace = null;
@@ -76,6 +76,10 @@ internal static class BoxChoice
             throw;
         }
     }
+
+    /// <summary>The chosen box's name: flag, then environment, then the only port there is.</summary>
+    public static string NameOf(Shell shell, ParseResult parsed) =>
+        parsed.GetValue(BoxOption) ?? shell.Environment(Variable) ?? OnlyPort();
 
     /// <summary>The world behind a box's name, or null if the name is not one of the bench.</summary>
     public static World? WorldOf(string boxName)
@@ -121,7 +125,7 @@ internal static class BoxChoice
     }
 
     /// <summary>What the builder of this virtual box would have written down: the detector's kind, pedestal and time constant.</summary>
-    private static DetectorLaw LawOf(World world)
+    public static DetectorLaw LawOf(World world)
     {
         DetectorParameters detector = world.Detector;
         double countsPerVolt = 4095 / world.Converter.FullScaleVolts;

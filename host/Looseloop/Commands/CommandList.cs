@@ -10,6 +10,7 @@ internal static class CommandList
     {
         yield return ReadCommand.Create(shell);
         yield return SurveyCommand.Create(shell);
+        yield return LogCommand.Create(shell);
         yield return FitCommand.Create(shell);
         yield return BenchCommand.Create(shell);
         yield return BoxesCommand.Create(shell);
