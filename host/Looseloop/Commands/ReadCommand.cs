@@ -93,6 +93,11 @@ internal sealed class ReadCommand(Shell shell)
             return;
         }
 
+        if (shell.OutIsTerminal)
+        {
+            CurveView.Write(shell.Out, outcome, 0);
+        }
+
         ReadingText.Write(shell.Out, outcome.Reading);
         if (parsed.GetValue(_budget))
         {
