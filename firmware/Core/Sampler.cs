@@ -16,6 +16,7 @@ namespace Looseloop.Firmware
         private int _channel;
         private int _wanted;
         private int _spacingUs;
+        private long _durationUs;
         private long _endUs;
 
         public Sampler(IPickup pickup, SteadyClock clock, int fullCounts)
@@ -47,13 +48,13 @@ namespace Looseloop.Firmware
         /// <summary>Prepares to take a number of samples, so far apart; 0: as fast as it can.</summary>
         public void BeginCount(int channel, int samples, int spacingUs)
         {
-            Begin(channel, samples, spacingUs, long.MaxValue);
+            Begin(channel, samples, spacingUs, 0);
         }
 
-        /// <summary>Prepares to take samples, one at least, for a time that begins now.</summary>
+        /// <summary>Prepares to take samples, one at least, for a time from the first one on.</summary>
         public void BeginTime(int channel, long durationUs, int spacingUs)
         {
-            Begin(channel, int.MaxValue, spacingUs, _clock.NowUs() + durationUs);
+            Begin(channel, int.MaxValue, spacingUs, durationUs);
         }
 
         /// <summary>Takes samples until all are there, but not for long past a time.</summary>
@@ -63,6 +64,7 @@ namespace Looseloop.Firmware
             if (Samples == 0)
             {
                 FromUs = _clock.NowUs();
+                _endUs = _durationUs > 0 ? FromUs + _durationUs : long.MaxValue;
             }
 
             if (untilUs > _endUs)
@@ -104,12 +106,12 @@ namespace Looseloop.Firmware
             return level;
         }
 
-        private void Begin(int channel, int samples, int spacingUs, long endUs)
+        private void Begin(int channel, int samples, int spacingUs, long durationUs)
         {
             _channel = channel;
             _wanted = samples;
             _spacingUs = spacingUs;
-            _endUs = endUs;
+            _durationUs = durationUs;
             Samples = 0;
             Sum = 0;
             Squares = 0;

@@ -6,8 +6,9 @@ namespace Looseloop.Firmware
     /// <summary>Everything the box says, one method a word, in one buffer.</summary>
     internal sealed class Talker
     {
-        // Less than the 50 ms that are promised, for the piece of work between two looks at the clock.
-        private const long AliveUs = (WireLimits.AliveMs - 10) * 1000L;
+        // Less than the 50 ms that are promised: a write may return one tick of the scheduler (10 ms) after its last byte has
+        // gone, and the clock is looked at only between pieces of work.
+        private const long AliveUs = (WireLimits.AliveMs - 20) * 1000L;
 
         private readonly LineWriter _writer = new LineWriter(WireLimits.BoxLineBytes);
         private readonly ILink _link;

@@ -7,7 +7,7 @@ namespace Looseloop.Firmware.Tests;
 /// <summary>The firmware passes the metadata gate, and the gate refuses what it must.</summary>
 public class GateTests
 {
-    private static readonly Lazy<IReadOnlyList<Finding>> Refused =
+    private static readonly Lazy<IReadOnlyList<Finding>> _refused =
         new(() => MetadataGate.Check(CheckBuild.Read("Refused", "Looseloop.Refused"), CheckBuild.AllowedReferences));
 
     [Theory]
@@ -40,13 +40,13 @@ public class GateTests
     [InlineData("tables", Rule.GenericUse)]
     public void What_compiles_and_would_fail_on_the_board_is_refused(string place, string rule)
     {
-        Assert.Contains(Refused.Value, finding => finding.Place == place && finding.Rule == rule);
+        Assert.Contains(_refused.Value, finding => finding.Place == place && finding.Rule == rule);
     }
 
     [Fact]
     public void What_is_allowed_is_let_through()
     {
-        Assert.DoesNotContain(Refused.Value, finding => finding.Place.StartsWith("Allowed", StringComparison.Ordinal));
+        Assert.DoesNotContain(_refused.Value, finding => finding.Place.StartsWith("Allowed", StringComparison.Ordinal));
     }
 
     [Fact]

@@ -33,7 +33,7 @@ public class GoldenTests
         }
 
         Assert.Equal(expected, host.Board.Sent.Select(sent => sent.Text));
-        Assert.Equal(51, expected.Count);
+        Assert.Equal(58, expected.Count);
     }
 
     [Fact]

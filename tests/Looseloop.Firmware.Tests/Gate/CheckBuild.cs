@@ -3,7 +3,7 @@ namespace Looseloop.Firmware.Tests.Gate;
 /// <summary>The assemblies that building firmware/Check made, which this project's build does first.</summary>
 internal static class CheckBuild
 {
-    private static readonly string Configuration =
+    private static readonly string _configuration =
         AppContext.BaseDirectory.Contains($"{Path.DirectorySeparatorChar}Release{Path.DirectorySeparatorChar}", StringComparison.Ordinal)
             ? "Release"
             : "Debug";
@@ -20,7 +20,7 @@ internal static class CheckBuild
 
     /// <summary>The file of one project below firmware/Check.</summary>
     public static string PathOf(string folder, string assembly) =>
-        Path.Combine(Repository.Root, "firmware", "Check", folder, "bin", Configuration, assembly + ".dll");
+        Path.Combine(Repository.Root, "firmware", "Check", folder, "bin", _configuration, assembly + ".dll");
 
     public static byte[] Read(string folder, string assembly) => File.ReadAllBytes(PathOf(folder, assembly));
 }

@@ -7,7 +7,7 @@ namespace Looseloop.Firmware.Tests.Gate;
 /// <summary>Walks through the instructions of a method body.</summary>
 internal static class IlReader
 {
-    private static readonly Dictionary<int, OpCode> Known = typeof(OpCodes)
+    private static readonly Dictionary<int, OpCode> _known = typeof(OpCodes)
         .GetFields(BindingFlags.Public | BindingFlags.Static)
         .Select(field => (OpCode)field.GetValue(null)!)
         .ToDictionary(code => (int)(ushort)code.Value);
@@ -23,7 +23,7 @@ internal static class IlReader
                 value = 0xFE00 | il[i++];
             }
 
-            OpCode code = Known[value];
+            OpCode code = _known[value];
             int token = 0;
             switch (code.OperandType)
             {

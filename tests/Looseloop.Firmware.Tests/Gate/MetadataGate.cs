@@ -11,7 +11,7 @@ namespace Looseloop.Firmware.Tests.Gate;
 /// </summary>
 internal sealed class MetadataGate
 {
-    private static readonly string[] RefusedOpCodes =
+    private static readonly string[] _refusedOpCodes =
     [
         "arglist", "calli", "ckfinite", "cpblk", "initblk", "jmp", "localloc", "mkrefany", "refanytype", "refanyval", "readonly.",
     ];
@@ -159,7 +159,7 @@ internal sealed class MetadataGate
         foreach ((System.Reflection.Emit.OpCode code, int token) in IlReader.Read(body.GetILBytes()!))
         {
             string name = code.Name!;
-            if (RefusedOpCodes.Contains(name) || name.Contains(".ovf", StringComparison.Ordinal))
+            if (_refusedOpCodes.Contains(name) || name.Contains(".ovf", StringComparison.Ordinal))
             {
                 Add(Rule.OpCode, place, name);
             }
