@@ -17,9 +17,9 @@ public class MisbehavingBoardTests
 
     [Theory]
     [InlineData(Sweep, 3)]
-    [InlineData(Sweep, 9000)]
-    [InlineData(Packed, 9000)]
-    [InlineData(Ring, 9000)]
+    [InlineData(Sweep, 8400)]
+    [InlineData(Packed, 8400)]
+    [InlineData(Ring, 8330)]
     [InlineData("dark 5000 0 0", 2000)]
     public void The_converter_throws(string request, int atRead)
     {
@@ -323,6 +323,7 @@ public class MisbehavingBoardTests
     {
         host.Board.BeforeRead = null;
         host.Board.BeforeReceive = null;
+        host.Board.Level = (board, _) => board.IsDriving ? 1500 : 400;
         Assert.False(host.Board.IsDriving);
         Assert.Equal("box", host.Ok("identify").Word);
         host.PlanRun(2);
