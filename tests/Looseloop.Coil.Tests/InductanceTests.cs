@@ -188,7 +188,7 @@ public class InductanceTests
     }
 
     // Neumann's double integral along the true spiral, at whole and at broken turns; the conductor's radius as the distance of its
-    // skin from its centre. Loops and interpolation stay within 2 %.
+    // skin from its centre. Loops and interpolation stay within 1 %.
     [Theory]
     [InlineData(3)]
     [InlineData(3.25)]
@@ -222,7 +222,7 @@ public class InductanceTests
             }
         }
 
-        Assert.Equal(1, new PrimaryCoil(SampleCoil.Spiral).InductanceH(turns) / (1e-7 * sum), .02);
+        Assert.Equal(1, new PrimaryCoil(SampleCoil.Spiral).InductanceH(turns) / (1e-7 * sum), .01);
     }
 
     // Half a turn of thin wire: Neumann's integral by brute force, the wire's radius as distance, over that of the whole turn.

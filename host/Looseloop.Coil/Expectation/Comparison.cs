@@ -33,8 +33,8 @@ public sealed record Comparison
     /// <param name="readUncertaintyHz">Its absolute standard uncertainty.</param>
     public static Comparison Of(CoilExpectation expectation, double readHz, double readUncertaintyHz)
     {
-        Demand.Frequency(readHz, nameof(readHz));
-        Demand.Uncertainty(readUncertaintyHz, nameof(readUncertaintyHz));
+        Demand.Frequency(readHz, "the reading");
+        Demand.Uncertainty(readUncertaintyHz, "the uncertainty of the reading");
         CoilGeometry coil = expectation.Coil;
         // The quick model's own small error must not pass for a cause.
         double target = readHz * Expectations.F1Hz(coil, Resolution.Quick) / expectation.F1Hz;

@@ -17,9 +17,9 @@ public static class Targeting
     /// <param name="resolution">Of the field model.</param>
     public static IReadOnlyList<SweepRow> Sweep(Dimension dimension, double from, double to, double step, Resolution resolution)
     {
-        Demand.Within(from, -1e6, 1e6, nameof(from), dimension.Unit);
-        Demand.Within(to, from, 1e6, nameof(to), dimension.Unit);
-        Demand.Within(step, 1e-9, 1e6, nameof(step), dimension.Unit);
+        Demand.Within(from, -1e6, 1e6, "the first value", dimension.Unit);
+        Demand.Within(to, from, 1e6, "the last value", dimension.Unit);
+        Demand.Within(step, 1e-9, 1e6, "the step", dimension.Unit);
         int count = (int)Demand.Within(Math.Floor(((to - from) / step) + 1e-9) + 1, 1, 1000, "number of rows", "");
         var rows = new SweepRow[count];
         for (int i = 0; i < count; i++)
@@ -43,9 +43,9 @@ public static class Targeting
     /// <param name="resolution">Of the field model.</param>
     public static double? Find(Dimension dimension, double wantedHz, double low, double high, Resolution resolution)
     {
-        Demand.Frequency(wantedHz, nameof(wantedHz));
-        Demand.Within(low, -1e6, 1e6, nameof(low), dimension.Unit);
-        Demand.Within(high, low, 1e6, nameof(high), dimension.Unit);
+        Demand.Frequency(wantedHz, "the wanted f1");
+        Demand.Within(low, -1e6, 1e6, "the lower bound", dimension.Unit);
+        Demand.Within(high, low, 1e6, "the upper bound", dimension.Unit);
         double Miss(double value)
         {
             CoilGeometry coil = dimension.With(value);

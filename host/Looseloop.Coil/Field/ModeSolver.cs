@@ -16,8 +16,8 @@ public static class ModeSolver
     /// <param name="addedTopF">A lumped capacitance from the top to ground, farad, 0 or more (a probe).</param>
     public static IReadOnlyList<Mode> Lowest(FieldModel model, int count, double addedTopF = 0)
     {
-        Demand.Within(count, 1, 8, nameof(count), "");
-        Demand.Within(addedTopF, 0, 1, nameof(addedTopF), "F");
+        Demand.Within(count, 1, 8, "the number of modes", "");
+        Demand.Within(addedTopF, 0, 1, "the added capacitance", "F");
         int n = model.WindingBands;
         int most = Math.Min(MostSteps, n);
         count = Math.Min(count, n);

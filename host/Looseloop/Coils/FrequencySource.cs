@@ -22,9 +22,13 @@ internal sealed record FrequencySource(
     /// <summary>Names the record where the command line does not.</summary>
     public static readonly Option<string?> RecordOption = new("--record")
     {
-        Description = "The record to take readings from (default: the user's own).",
+        Description = "The record to take readings from (default: $LOOSELOOP_RECORD, or the user's own).",
         HelpName = "FILE",
     };
+
+    /// <summary>The record's file: flag, then $LOOSELOOP_RECORD, then the user's own.</summary>
+    public static string RecordPath(Shell shell, ParseResult parsed) =>
+        parsed.GetValue(RecordOption) ?? shell.Environment("LOOSELOOP_RECORD") ?? RecordFolder.DefaultFile();
 
     /// <summary>Whether the reading was of the primary tank and not of the secondary.</summary>
     public bool IsOfPrimary => SetUp.TryGetValue("of", out string? of) && of == "primary";
@@ -44,7 +48,7 @@ internal sealed record FrequencySource(
             return Given(hertz);
         }
 
-        return FromRecord(shell, parsed.GetValue(RecordOption) ?? RecordFolder.DefaultFile(), words);
+        return FromRecord(RecordPath(shell, parsed), words);
     }
 
     /// <summary>Says on the error stream that a doubtful reading is one.</summary>
@@ -59,9 +63,8 @@ internal sealed record FrequencySource(
         return ExitCode.NotTrustworthy;
     }
 
-    private static FrequencySource FromRecord(Shell shell, string path, string words)
+    private static FrequencySource FromRecord(string path, string words)
     {
-        _ = shell;
         try
         {
             using RecordReader reader = RecordReader.Open(path);

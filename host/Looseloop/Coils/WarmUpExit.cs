@@ -7,11 +7,11 @@ namespace Looseloop.Coils;
 /// <summary>When a logged run's warm-up carries f0 out of a window about its first value.</summary>
 internal static class WarmUpExit
 {
-    public static WindowExit Of(string? recordPath, long run, WindowRow window)
+    public static WindowExit Of(string recordPath, long run, WindowRow window)
     {
         try
         {
-            using RecordReader reader = RecordReader.Open(recordPath ?? RecordFolder.DefaultFile());
+            using RecordReader reader = RecordReader.Open(recordPath);
             _ = reader.Run(run);
             DriftSeries series = DriftSeries.Of(reader.Track(run).Select(
                 p => new DriftPoint(p.TimeS, p.F0Hz, p.F0RepeatabilityHz, p.TemperatureC)));

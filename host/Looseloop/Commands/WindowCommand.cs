@@ -64,7 +64,7 @@ internal sealed class WindowCommand(Shell shell)
         WindowFigures figures = CoilWork.Run(() => WindowFigures.Of(f0, q, isBound, loaded, topF, fractions, resonant, component));
         if (parsed.GetValue(_run) is long run)
         {
-            figures = figures with { Exit = WarmUpExit.Of(parsed.GetValue(FrequencySource.RecordOption), run, figures.Cold[0]) };
+            figures = figures with { Exit = WarmUpExit.Of(FrequencySource.RecordPath(shell, parsed), run, figures.Cold[0]) };
         }
 
         if (parsed.GetValue(CommonOptions.Json))

@@ -62,6 +62,8 @@ public class ExpectCommandTests
         AppRun run = scene.Run("expect", "foyer", "--against", "last", "--record", scene.Record);
         Assert.Equal(5, run.ExitCode);
         Assert.Contains("doubtful", run.Error, StringComparison.Ordinal);
+        AppRun byEnvironment = AppRun.With(new Dictionary<string, string> { ["LOOSELOOP_RECORD"] = scene.Record }, "expect", "foyer", "--against", "last");
+        Assert.Equal(5, byEnvironment.ExitCode);
     }
 
     [Fact]
