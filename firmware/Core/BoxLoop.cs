@@ -52,12 +52,6 @@ namespace Looseloop.Firmware
             return true;
         }
 
-        /// <summary>Stops the drive at once, whatever is going on.</summary>
-        public void StopDrive()
-        {
-            _drive.Stop();
-        }
-
         private bool Listen()
         {
             bool heard;

@@ -26,9 +26,6 @@ namespace nanoFramework.Hardware.Esp32
         COM2_TX = 0x30200,
         COM2_RX = 0x30201,
         PWM1 = 0x40100,
-        ADC1_CH4 = 0x50104,
-        ADC1_CH6 = 0x50106,
-        ADC1_CH7 = 0x50107,
     }
 
     public class HighResTimer : IDisposable
