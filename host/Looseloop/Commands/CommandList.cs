@@ -11,6 +11,10 @@ internal static class CommandList
         yield return ReadCommand.Create(shell);
         yield return SurveyCommand.Create(shell);
         yield return LogCommand.Create(shell);
+        yield return LadderCommand.Create(shell);
+        yield return StandoffCommand.Create(shell);
+        yield return SetUpCommand.Create(shell);
+        yield return TrimCommand.Create(shell);
         yield return FitCommand.Create(shell);
         yield return BenchCommand.Create(shell);
         yield return BoxesCommand.Create(shell);

@@ -2,8 +2,10 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Boxes;
 using Looseloop.Procedures.Read;
+using Looseloop.Procedures.Ring;
 using Looseloop.Procedures.Survey;
 using Looseloop.Readings;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Tables;
 using Looseloop.Terminal;
@@ -18,6 +20,7 @@ internal sealed class ReadCommand(Shell shell)
     private readonly Option<double?> _to = Quantity.HertzOption("--to", "Highest frequency of the survey (600k).");
     private readonly Option<double?> _delay = Quantity.SecondsOption("--delay", "Wait before reading, to step back from the coil.");
     private readonly Option<double?> _mains = Quantity.HertzOption("--mains", "Mains frequency, 50 or 60 (50).");
+    private readonly Option<bool> _ring = new("--ring") { Description = "Take Q by ring-down too, as a second opinion." };
     private readonly Option<bool> _budget = new("--budget") { Description = "Show the uncertainty budget." };
     private readonly Option<string?> _save = new("--save") { Description = "Write the points to a CSV file.", HelpName = "FILE" };
     private readonly Option<string?> _coil = new("--coil") { Description = "The coil's name.", HelpName = "NAME" };
@@ -29,7 +32,7 @@ internal sealed class ReadCommand(Shell shell)
     {
         var command = new Command("read", "Read f0 and Q of a coil that is not energised, with uncertainty and verdict.")
         {
-            Options = { _near, _from, _to, _delay, _mains, _budget, _save, _coil, _note },
+            Options = { _near, _from, _to, _delay, _mains, _ring, _budget, _save, _coil, _note, RecordChoice.RecordOption },
         };
         BoxChoice.AddTo(command);
         command.SetAction(Run);
@@ -61,14 +64,20 @@ internal sealed class ReadCommand(Shell shell)
             MainsHz = parsed.GetValue(_mains) ?? 50,
             Coil = parsed.GetValue(_coil),
             Note = parsed.GetValue(_note),
+            Ring = parsed.GetValue(_ring),
             HostVersion = AppVersion.Text,
             Time = shell.Time,
         };
+        options = KnownFacts.Apply(shell, parsed, options, box.Session.Identity.Port);
         var progress = new ProgressLine(shell, quiet);
         ReadOutcome outcome;
         try
         {
             outcome = new ReadProcedure(box.Session, options, progress, shell.Cancel).Run();
+            if (options.Ring)
+            {
+                outcome = RingSecondOpinion.Add(box.Session, options, outcome, progress, shell.Cancel).Outcome;
+            }
         }
         finally
         {

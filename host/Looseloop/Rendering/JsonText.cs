@@ -38,6 +38,18 @@ internal static class JsonText
         }
     }
 
+    /// <summary>An array of sentences.</summary>
+    public static void Texts(this Utf8JsonWriter writer, string name, IEnumerable<string> texts)
+    {
+        writer.WriteStartArray(name);
+        foreach (string text in texts)
+        {
+            writer.WriteStringValue(text);
+        }
+
+        writer.WriteEndArray();
+    }
+
     /// <summary>An array of objects.</summary>
     public static void Objects<T>(this Utf8JsonWriter writer, string name, IEnumerable<T> items, Action<T> write)
     {

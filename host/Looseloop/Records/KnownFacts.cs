@@ -1,0 +1,44 @@
+using System.CommandLine;
+using Looseloop.Procedures.Read;
+using Looseloop.Readings;
+using Looseloop.Record;
+using Looseloop.Terminal;
+
+namespace Looseloop.Records;
+
+/// <summary>What earlier ladders, trims, standoffs and statements have left in the record, put to use.</summary>
+internal static class KnownFacts
+{
+    /// <summary>The options of a reading with the law, clock, set-up and pull that the record knows; as they are where there is no record.</summary>
+    public static ReadOptions Apply(Shell shell, ParseResult parsed, ReadOptions options, string box)
+    {
+        if (!File.Exists(RecordChoice.PathOf(shell, parsed)))
+        {
+            return options;
+        }
+
+        try
+        {
+            using RecordStore store = RecordChoice.OpenForWriting(shell, parsed);
+            return Apply(options, box, new RecordFacts(store, AppVersion.Text));
+        }
+        catch (RecordException error) when (error.Problem == RecordProblem.Busy)
+        {
+            shell.Say($"What is known of this box and coil could not be looked up, and the budget is wider for it: {error.Message}");
+            return options;
+        }
+    }
+
+    /// <summary>The same from open facts.</summary>
+    public static ReadOptions Apply(ReadOptions options, string box, RecordFacts facts)
+    {
+        IReadOnlyDictionary<string, string> setUp = options.Coil is string name && options.SetUp.Count == 0 ? facts.SetUpOf(name) : options.SetUp;
+        return options with
+        {
+            Law = facts.LawOf(box) is DetectorLaw law && law.Kind == options.Law.Kind ? law : options.Law,
+            Clock = facts.ClockOf(box) ?? options.Clock,
+            SetUp = setUp,
+            Pull = options.Coil is string coil ? facts.PullOf(coil, setUp) ?? options.Pull : options.Pull,
+        };
+    }
+}
