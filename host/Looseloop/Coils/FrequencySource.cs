@@ -33,6 +33,15 @@ internal sealed record FrequencySource(
     /// <summary>Whether the reading was of the primary tank and not of the secondary.</summary>
     public bool IsOfPrimary => SetUp.TryGetValue("of", out string? of) && of == "primary";
 
+    /// <summary>Says on the error stream that the reading was taken with the primary otherwise than this use of it wants.</summary>
+    public void WarnOfPrimary(Shell shell, params string[] wanted)
+    {
+        if (SetUp.TryGetValue("primary", out string? stood) && !wanted.Contains(stood))
+        {
+            shell.Say($"{From} was taken with the primary {stood}, not {string.Join(" or ", wanted)}: check that it is the reading you mean.");
+        }
+    }
+
     /// <summary>A figure given by hand.</summary>
     public static FrequencySource Given(double hertz) =>
         new(hertz, double.NaN, double.NaN, double.NaN, "as given", Verdict.Sound, _nothing);

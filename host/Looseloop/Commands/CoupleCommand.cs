@@ -37,6 +37,8 @@ internal sealed class CoupleCommand(Shell shell)
             throw new UserError("Both readings must be of the secondary; one of these is of the primary tank.");
         }
 
+        open.WarnOfPrimary(shell, "open");
+        shorted.WarnOfPrimary(shell, "shorted");
         double given = parsed.GetValue(_uncertainty) ?? double.NaN;
         double uOpen = double.IsFinite(open.RepeatabilityHz) ? open.RepeatabilityHz : given;
         double uShorted = double.IsFinite(shorted.RepeatabilityHz) ? shorted.RepeatabilityHz : given;

@@ -59,6 +59,7 @@ internal sealed class ExpectCommand(Shell shell)
             throw new UserError($"{source.From} is a reading of the primary tank, not of the secondary: set it beside `tank`.");
         }
 
+        source?.WarnOfPrimary(shell, "absent", "open");
         Comparison? comparison = source is null
             ? null
             : CoilWork.Run(() => Comparison.Of(expectation, source.F0Hz, double.IsFinite(source.AbsoluteHz) ? source.AbsoluteHz : 0));

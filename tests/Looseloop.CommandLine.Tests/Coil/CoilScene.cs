@@ -32,13 +32,13 @@ internal sealed class CoilScene : IDisposable
     }
 
     /// <summary>Keeps a reading in the record, in a run of its own.</summary>
-    public void Keep(double f0Hz, double q, Verdict verdict = Verdict.Sound, string? of = null, string? note = null)
+    public void Keep(double f0Hz, double q, Verdict verdict = Verdict.Sound, string? of = null, string? note = null, string? primary = null)
     {
         DateTimeOffset utc = new(2026, 3, 1, 12, 0, 0, TimeSpan.Zero);
         using RecordStore store = RecordStore.Open(Record, utc);
         Guid run = Guid.CreateVersion7();
         store.Append(new RunStart { Id = run, Utc = utc, Procedure = "read", HostVersion = "0" });
-        store.Append(run, Made(f0Hz, q, verdict, of, note, utc));
+        store.Append(run, Made(f0Hz, q, verdict, of, note, utc, primary));
         store.Append(new RunStop(run, utc, RunStatus.Completed, "done", 1));
     }
 
@@ -61,7 +61,7 @@ internal sealed class CoilScene : IDisposable
 
     public void Dispose() => Directory.Delete(Folder, recursive: true);
 
-    private static Reading Made(double f0Hz, double q, Verdict verdict, string? of, string? note, DateTimeOffset utc) => new()
+    private static Reading Made(double f0Hz, double q, Verdict verdict, string? of, string? note, DateTimeOffset utc, string? primary = null) => new()
     {
         Id = Guid.CreateVersion7(),
         Utc = utc,
@@ -71,7 +71,7 @@ internal sealed class CoilScene : IDisposable
         HostVersion = "0",
         Coil = "sample",
         Note = note,
-        SetUp = of is null ? new Dictionary<string, string>() : new Dictionary<string, string> { ["of"] = of },
+        SetUp = new[] { ("of", of), ("primary", primary) }.Where(p => p.Item2 is not null).ToDictionary(p => p.Item1, p => p.Item2!),
         F0Hz = f0Hz,
         Q = q,
         PeakCounts = 1000,

@@ -54,6 +54,17 @@ public class DrivingCommandTests
         Assert.Equal(.00087 / 25, e.GetProperty("k_standard").GetDouble(), 1e-6);
     }
 
+    [Fact]
+    public void Couple_looks_at_how_the_primary_stood()
+    {
+        using var scene = new CoilScene();
+        scene.Keep(250e3, 200, note: "a", primary: "open");
+        scene.Keep(253.2e3, 200, note: "b", primary: "absent");
+        string error = scene.Run("couple", "a", "b", "--record", scene.Record).Error;
+        Assert.Contains("with the primary absent, not shorted", error, StringComparison.Ordinal);
+        Assert.DoesNotContain("not open", error, StringComparison.Ordinal);
+    }
+
     // Two capacitors: with 5 pF on 16 pF an error comes out 8.4 times.
     [Fact]
     public void Pad()
