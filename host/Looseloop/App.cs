@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.Globalization;
 using Looseloop.Commands;
 using Looseloop.Terminal;
 
@@ -14,6 +15,8 @@ internal static class App
     /// <param name="shell">Where its words go and come from.</param>
     public static int Run(string[] args, Shell shell)
     {
+        // Figures are written one way everywhere, so that a script reads them anywhere.
+        CultureInfo.CurrentCulture = CultureInfo.InvariantCulture;
         ParseResult parsed = Root(shell).Parse(args);
         if (parsed.Errors.Count > 0 && parsed.Action is not System.CommandLine.Help.HelpAction)
         {

@@ -36,8 +36,12 @@ public sealed record MeasurePlan(
     /// </summary>
     private const double ReachShare = 0.06;
 
-    /// <summary>Detunings, bandwidths, where at least one setting stands on either side, so that the model can be doubted.</summary>
-    private static readonly double[] _doubting = [1.3, 2.1];
+    /// <summary>
+    /// A design puts its points where they determine the model; a second response hides between them. So every setting
+    /// within this of f0, bandwidths, is visited at least once, or every second or third where there are many.
+    /// </summary>
+    private const double Doubting = 2.6;
+    private const int MostDoubting = 13;
 
     /// <summary>Below this duty the level was too high for the converter; a vernier at 1/2 might be again.</summary>
     private const double LeastDutyForVernier = 0.3;
@@ -103,16 +107,9 @@ public sealed record MeasurePlan(
             harmonics[point.Setting] = point.Harmonic;
         }
 
-        foreach (double side in _doubting.SelectMany(u => new[] { -u, u }))
-        {
-            double wantedHz = target.F0Hz + (side * target.BandwidthHz);
-            bool there = settings.Any(s => harmonics[s] == 1 && (s.FrequencyHz - target.F0Hz) / (wantedHz - target.F0Hz) > 0.9);
-            Setting setting = box.Grid.Nearest(wantedHz, target.Duty);
-            if (!there && IsInside(box, setting) && harmonics.TryAdd(setting, 1))
-            {
-                settings.Add(setting);
-            }
-        }
+        Setting[] near = [.. Around(box, target, 1, target.Duty).Where(s => Math.Abs(s.FrequencyHz - target.F0Hz) < Doubting * target.BandwidthHz)];
+        int stride = (near.Length + MostDoubting - 1) / MostDoubting;
+        settings.AddRange(near.Where((setting, i) => i % Math.Max(stride, 1) == 0 && harmonics.TryAdd(setting, 1)));
 
         return new MeasurePlan(
             [.. settings.OrderBy(setting => harmonics[setting]).ThenBy(setting => setting.FrequencyHz)], harmonics, dwellUs, SamplesAMainsPeriod, spacingUs);
