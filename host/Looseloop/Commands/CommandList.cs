@@ -15,6 +15,12 @@ internal static class CommandList
         yield return StandoffCommand.Create(shell);
         yield return SetUpCommand.Create(shell);
         yield return TrimCommand.Create(shell);
+        yield return HistoryCommand.Create(shell);
+        yield return ShowCommand.Create(shell);
+        yield return CompareCommand.Create(shell);
+        yield return DriftCommand.Create(shell);
+        yield return ExportCommand.Create(shell);
+        yield return ImportCommand.Create(shell);
         yield return FitCommand.Create(shell);
         yield return BenchCommand.Create(shell);
         yield return BoxesCommand.Create(shell);

@@ -17,7 +17,10 @@ internal static class ResponseTable
 {
     private static readonly Dictionary<string, double> _units = new(StringComparer.OrdinalIgnoreCase)
     {
-        ["hz"] = 1, ["khz"] = 1e3, ["mhz"] = 1e6, ["ghz"] = 1e9,
+        ["hz"] = 1,
+        ["khz"] = 1e3,
+        ["mhz"] = 1e6,
+        ["ghz"] = 1e9,
     };
 
     private static readonly string[] _frequencyNames = ["frequency", "freq", "f"];

@@ -1,5 +1,6 @@
 using Looseloop.Box;
 using Looseloop.Link;
+using Looseloop.Record;
 
 namespace Looseloop.Terminal;
 
@@ -21,6 +22,11 @@ internal static class Guard
         {
             shell.Error(error.Message);
             return error.ExitCode;
+        }
+        catch (RecordException error)
+        {
+            shell.Error(error.Message);
+            return ExitCode.Failure;
         }
         catch (LinkLostException error)
         {
