@@ -1,5 +1,6 @@
 using System.CommandLine;
 using System.Text.Json;
+using Looseloop.Readings;
 using Looseloop.Record;
 using Looseloop.Records;
 using Looseloop.Rendering;
@@ -71,13 +72,15 @@ internal sealed class HistoryCommand(Shell shell)
     private void ShowRuns(IReadOnlyList<RunSummary> runs)
     {
         Table table = new Table().Border(TableBorder.Simple)
-            .AddColumns("run", "when", "what", "coil", "readings", "last", "f0 in Hz", "Q", "verdict", "end", "note");
+            .AddColumns("run", "when", "what", "coil", "n", "last f0 in Hz", "last Q", "verdict", "note");
         foreach (RunSummary run in runs)
         {
+            // Only an end that is not the usual one is worth its place on the line.
+            string what = run.Stop is { Status: RunStatus.Completed } ? run.Procedure : $"{run.Procedure}, {RecordWords.Status(run.Stop)}";
             table.AddRow(
-                $"{run.Number}", RecordWords.Time(shell, run.Utc), run.Procedure.EscapeMarkup(), (run.Coil ?? "").EscapeMarkup(), $"{run.Count}",
-                run.Last is { } last ? $"{last.Number}" : "-", RecordWords.F0(run.Last), RecordWords.Q(run.Last),
-                run.Last is { } read ? Verdicts.Markup(read.Verdict) : "-", RecordWords.Status(run.Stop), (run.Note ?? "").EscapeMarkup());
+                $"{run.Number}", RecordWords.Minute(shell, run.Utc), what.EscapeMarkup(), (run.Coil ?? "").EscapeMarkup(), $"{run.Count}",
+                RecordWords.F0(run.Last), RecordWords.Q(run.Last), run.Last is { } read ? Verdicts.Markup(read.Verdict) : "-",
+                (run.Note ?? "").EscapeMarkup());
         }
 
         shell.Out.Write(table);
@@ -89,12 +92,12 @@ internal sealed class HistoryCommand(Shell shell)
 
     private void ShowReadings(IReadOnlyList<ReadingSummary> readings)
     {
-        Table table = new Table().Border(TableBorder.Simple).AddColumns("reading", "run", "when", "coil", "f0 in Hz", "Q", "verdict", "note");
+        Table table = new Table().Border(TableBorder.Simple).AddColumns("reading", "when", "coil", "f0 in Hz", "Q", "verdict", "note");
         foreach (ReadingSummary reading in readings)
         {
             string note = reading.RefitOf is { } of ? $"refit of {of} {reading.Note}" : reading.Note ?? "";
             table.AddRow(
-                $"{reading.Number}", $"{reading.Run}", RecordWords.Time(shell, reading.Utc), (reading.Coil ?? "").EscapeMarkup(),
+                $"{reading.Number}", RecordWords.Minute(shell, reading.Utc), (reading.Coil ?? "").EscapeMarkup(),
                 RecordWords.F0(reading), RecordWords.Q(reading), Verdicts.Markup(reading.Verdict), note.EscapeMarkup());
         }
 

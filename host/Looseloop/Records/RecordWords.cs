@@ -13,6 +13,9 @@ internal static class RecordWords
     public static string Time(Shell shell, DateTimeOffset utc) =>
         TimeZoneInfo.ConvertTime(utc, shell.Time.LocalTimeZone).ToString("yyyy-MM-dd HH:mm:ss", CultureInfo.InvariantCulture);
 
+    /// <summary>The same without seconds, for tables.</summary>
+    public static string Minute(Shell shell, DateTimeOffset utc) => Time(shell, utc)[..16];
+
     /// <summary>f0 with its 95 % interval between readings.</summary>
     public static string F0(ReadingSummary? reading) => reading is null || !double.IsFinite(reading.F0Hz)
         ? "-"

@@ -13,7 +13,7 @@ public sealed class HistoryCommandTests : IDisposable
     {
         AppRun run = _record.Run("history");
         Assert.Equal(0, run.ExitCode);
-        Assert.Contains("completed", run.Out);
+        Assert.Contains("top moved", run.Out);
         Assert.True(run.Out.IndexOf("log", StringComparison.Ordinal) < run.Out.IndexOf("read ", StringComparison.Ordinal));
     }
 
