@@ -83,6 +83,7 @@ internal sealed class HistoryCommand(Shell shell)
                 (run.Note ?? "").EscapeMarkup());
         }
 
+        Narrow(table);
         shell.Out.Write(table);
         if (runs.Count == 0)
         {
@@ -101,10 +102,20 @@ internal sealed class HistoryCommand(Shell shell)
                 RecordWords.F0(reading), RecordWords.Q(reading), Verdicts.Markup(reading.Verdict), note.EscapeMarkup());
         }
 
+        Narrow(table);
         shell.Out.Write(table);
         if (readings.Count == 0)
         {
             shell.Say("Nothing in the record fits.");
+        }
+    }
+
+    // Little room between the columns, so that a usual line needs no second one at a hundred characters.
+    private static void Narrow(Table table)
+    {
+        foreach (TableColumn column in table.Columns)
+        {
+            column.Padding = new Padding(0, 0, 2, 0);
         }
     }
 
