@@ -90,8 +90,9 @@ internal sealed class ReadCommand(Shell shell)
             shell.Say($"{outcome.Reading.Points.Count} points are in {path}.");
         }
 
+        bool kept = ReadingKeeper.Keep(shell, parsed, "read", outcome.Reading);
         Show(parsed, outcome, quiet);
-        return Verdicts.ExitCodeOf(outcome.Reading.Verdict);
+        return kept ? Verdicts.ExitCodeOf(outcome.Reading.Verdict) : ExitCode.Failure;
     }
 
     private void Show(ParseResult parsed, ReadOutcome outcome, bool quiet)
