@@ -1,4 +1,5 @@
 using System.Diagnostics;
+using Looseloop.Interpreter.Tests.Plant;
 using Looseloop.Protocol;
 
 namespace Looseloop.Interpreter.Tests;
@@ -100,6 +101,31 @@ public class BoardTests
         board.WaitForDrive(false, 1);
         Assert.Equal(3, board.PinChanges().Zip(board.PinChanges().Skip(1)).Count(pair => !pair.First.On && pair.Second.On)
             + (board.PinChanges()[0].On ? 1 : 0));
+    }
+
+    [InterpreterTheory(CompilesPlant = true)]
+    [InlineData("Esp32")]
+    [InlineData("Esp32S3")]
+    public void A_ring_of_a_circuit_with_a_memory_gives_its_ring_time(string name)
+    {
+        const double RingTimeUs = 180 / (Math.PI * 0.1523);
+        using var plant = new CompiledPlant("decaying.c");
+        using InterpretedBoard board = InterpretedBoard.Start(name, "--plant", plant.Path);
+        using var client = new WireClient(board);
+
+        // Forty repeats, each later by 25 us: the interpreter here is so fast that one repeat spans little of the decay.
+        List<BoxMessage> said = client.Ask("ring 9 263 256 8000 50 25 32 40");
+        Assert.Equal(Ending.Complete, Assert.IsType<DoneAnswer>(said[^1]).Ending);
+        var points = said.OfType<DecayAnswer>()
+            .SelectMany(decay => decay.SinceStopUs.Zip(decay.Counts))
+            .Where(pair => pair.Second > 700)
+            .Select(pair => (X: (double)pair.First, Y: Math.Log(pair.Second - 400)))
+            .ToList();
+        double x = points.Average(point => point.X);
+        double y = points.Average(point => point.Y);
+        double slope = points.Sum(point => (point.X - x) * (point.Y - y)) / points.Sum(point => (point.X - x) * (point.X - x));
+        Assert.True(points.Count > 300);
+        Assert.InRange(-1 / slope, RingTimeUs * 0.97, RingTimeUs * 1.03);
     }
 
     [InterpreterTheory]

@@ -98,11 +98,8 @@ internal sealed partial class InterpretedBoard : IDisposable
         _process.Dispose();
     }
 
-    private static string FirmwareOf(string board)
-    {
-        string configuration = AppContext.BaseDirectory.Contains("/Release/", StringComparison.Ordinal) ? "Release" : "Debug";
-        return Path.Combine(Repository.Root, "firmware", "Check", board, "bin", configuration, $"Looseloop.{board}.dll");
-    }
+    private static string FirmwareOf(string board) =>
+        Path.Combine(Repository.Root, "firmware", "Check", board, "bin", $"Looseloop.{board}.dll");
 
     [GeneratedRegex(@"^PWM t=\S+ gpio=18 f=(?<f>\S+) count=(?<count>\d+) r=(?<r>\d+) on=(?<on>[01])")]
     private static partial Regex PinLine();

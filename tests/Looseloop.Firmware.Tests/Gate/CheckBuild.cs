@@ -3,11 +3,6 @@ namespace Looseloop.Firmware.Tests.Gate;
 /// <summary>The assemblies that building firmware/Check made, which this project's build does first.</summary>
 internal static class CheckBuild
 {
-    private static readonly string _configuration =
-        AppContext.BaseDirectory.Contains($"{Path.DirectorySeparatorChar}Release{Path.DirectorySeparatorChar}", StringComparison.Ordinal)
-            ? "Release"
-            : "Debug";
-
     /// <summary>What the firmware may refer to: the packages of firmware/README.md, by the versions of their assemblies.</summary>
     public static IReadOnlyDictionary<string, Version> AllowedReferences { get; } = new Dictionary<string, Version>
     {
@@ -20,7 +15,7 @@ internal static class CheckBuild
 
     /// <summary>The file of one project below firmware/Check.</summary>
     public static string PathOf(string folder, string assembly) =>
-        Path.Combine(Repository.Root, "firmware", "Check", folder, "bin", _configuration, assembly + ".dll");
+        Path.Combine(Repository.Root, "firmware", "Check", folder, "bin", assembly + ".dll");
 
     public static byte[] Read(string folder, string assembly) => File.ReadAllBytes(PathOf(folder, assembly));
 }
