@@ -33,7 +33,7 @@ public static class NearLook
             return new Result(new Response(ResponseKind.Carrier, nearHz, 0, 0, double.NaN, double.NaN), look, raw);
         }
 
-        var maker = new AmplitudeMaker(new DetectorScale(law), look.Mean);
+        var maker = new AmplitudeMaker(new DetectorScale(Pedestal.Settle(law, look)), look.Mean);
         double largestHz = raw.MaxBy(point => point.Mean).Setting.FrequencyHz;
         CloseLook.Finding finding = CloseLook.Run(box, maker, largestHz, cancel);
         CloseLook.Finding[] sources =

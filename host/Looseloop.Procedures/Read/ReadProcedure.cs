@@ -20,7 +20,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     /// <summary>Ring times until what is left of the own ring is below a thousandth of a count.</summary>
     private const double RingsToDie = 15;
 
-    private readonly DetectorScale _scale = new(options.Law);
+    private ReadOptions _options = options;
 
     /// <summary>Reads.</summary>
     /// <exception cref="BoxException">The box refused, failed or fell silent.</exception>
@@ -29,9 +29,9 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         SurveyResult? survey = null;
         double aboutHz;
         DarkLevel look;
-        if (options.NearHz is double near)
+        if (_options.NearHz is double near)
         {
-            NearLook.Result found = NearLook.Run(box, options.Law, near, watch, cancel);
+            NearLook.Result found = NearLook.Run(box, _options.Law, near, watch, cancel);
             look = found.Look;
             if (found.Response.Kind != ResponseKind.F0)
             {
@@ -42,19 +42,20 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         }
         else
         {
-            survey = SurveyProcedure.Run(box, options.Law, options.LowHz, options.HighHz, watch, cancel);
+            survey = SurveyProcedure.Run(box, _options.Law, _options.LowHz, _options.HighHz, watch, cancel);
             look = survey.Look;
             if (survey.F0 is null || survey.Saturated)
             {
-                return Nothing(survey, look, SurveyReasons.WhyNoF0(survey, options), []);
+                return Nothing(survey, look, SurveyReasons.WhyNoF0(survey, _options), []);
             }
 
             aboutHz = survey.F0.FrequencyHz;
         }
 
+        _options = _options with { Law = Pedestal.Settle(_options.Law, look) };
         watch.Begin($"finding the width at {aboutHz / 1000:0.0} kHz", 0.4);
-        var first = new AmplitudeMaker(_scale, look.Mean);
-        TargetSearch.Result search = TargetSearch.Run(box, first, aboutHz, options, cancel);
+        var first = new AmplitudeMaker(new DetectorScale(_options.Law), look.Mean);
+        TargetSearch.Result search = TargetSearch.Run(box, first, aboutHz, _options, cancel);
         if (search.Target is null)
         {
             return Nothing(survey, look, [FitReasons.WhyNot(search.Outcome, search.Saturated)], search.Points);
@@ -68,7 +69,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     {
         Target target = search.Target!;
         DarkLevel before = QuietDark(target);
-        MeasurePlan plan = MeasurePlan.For(box, search, new AmplitudeMaker(_scale, before.Mean), options.MainsHz);
+        MeasurePlan plan = MeasurePlan.For(box, search, new AmplitudeMaker(new DetectorScale(_options.Law), before.Mean), _options.MainsHz);
         double boardSeconds = plan.Settings.Count * 2e-6 * (plan.DwellUs + (plan.Samples * plan.SpacingUs));
         string vernier = plan.UsesVernier ? ", vernier settings among them" : "";
         watch.Begin($"measuring {plan.Settings.Distinct().Count()} settings there and back{vernier}", boardSeconds * 1.8);
@@ -85,21 +86,21 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             new SweepRequest(flanks, 2 * plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs }, cancel: cancel);
         DarkLevel after = QuietDark(target);
 
-        var maker = new AmplitudeMaker(_scale, (before.Mean + after.Mean) / 2);
+        var maker = new AmplitudeMaker(new DetectorScale(_options.Law), (before.Mean + after.Mean) / 2);
         EdgeWeight edges = plan.UsesVernier ? Edges(sweep.Points, other.Points, plan, maker) : EdgeWeight.None;
         FitPoint[] points =
         [
             .. CurveSweep.FitPoints(sweep.Points, maker, plan.Harmonics)
                 .Select(point => point.Group == 0 ? point with { DriveWeight = point.DriveWeight * edges.Factor } : point),
         ];
-        var declared = new FitOptions { PrefactorExponent = options.PrefactorExponent, F0GuessHz = target.F0Hz, QGuess = target.Q };
+        var declared = new FitOptions { PrefactorExponent = _options.PrefactorExponent, F0GuessHz = target.F0Hz, QGuess = target.Q };
         var fitter = new ResonanceFitter(Math.Max(points.Length, 16));
         ResonanceFit fit = fitter.Fit(points, declared);
         double[] residuals = fitter.NormalizedResiduals.ToArray();
         int half = points.Length / 2;
         return new Measurement
         {
-            Options = options,
+            Options = _options,
             Box = box.Identity,
             Target = target,
             Plan = plan,
@@ -133,7 +134,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     /// <summary>Dark after the own ring has died, over whole mains periods.</summary>
     private DarkLevel QuietDark(Target target)
     {
-        double seconds = RingsToDie * (target.RingTimeS + options.Law.TimeConstantS);
+        double seconds = RingsToDie * (target.RingTimeS + _options.Law.TimeConstantS);
         box.Pause(TimeSpan.FromSeconds(seconds));
         return box.Dark(DarkMs, cancel: cancel);
     }
@@ -170,12 +171,12 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
 
         Verdict verdict = reasons.Select(reason => reason.AtBest).Append(figures ? Verdict.Sound : Verdict.None).Min();
         ResonanceFit fit = measurement.Fit;
-        double clock = 1 + ((options.Clock?.Ppm ?? 0) * 1e-6);
-        double pull = options.Pull?.F0Relative ?? 0;
+        double clock = 1 + ((_options.Clock?.Ppm ?? 0) * 1e-6);
+        double pull = _options.Pull?.F0Relative ?? 0;
         Reading reading = Document(measurement.Points, [measurement.DarkBefore, measurement.DarkAfter], verdict, reasons, budget) with
         {
             F0Hz = figures ? fit.F0Hz * clock * (1 - pull) : double.NaN,
-            Q = figures ? 1 / ((1 / fit.Q) - (options.Pull?.LossAdded ?? 0)) : double.NaN,
+            Q = figures ? 1 / ((1 / fit.Q) - (_options.Pull?.LossAdded ?? 0)) : double.NaN,
             PeakCounts = figures ? fit.PeakAmplitude : double.NaN,
             FeedThrough = figures ? fit.FeedThrough.Ratio : double.NaN,
         };
@@ -188,7 +189,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     private Reading Document(
         IReadOnlyList<RawPoint> points, IReadOnlyList<DarkLevel> dark, Verdict verdict, IReadOnlyList<Reason> reasons, Budget budget)
     {
-        DateTimeOffset now = options.Time.GetUtcNow();
+        DateTimeOffset now = _options.Time.GetUtcNow();
         return new Reading
         {
             Id = Guid.CreateVersion7(now),
@@ -196,10 +197,10 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             BoardTimeUs = points.Count > 0 ? (points[0].BoardTimeUs + points[^1].BoardTimeUs) / 2 : box.BoardTimeUs,
             BoardSeconds = box.BoardSeconds,
             Box = box.Identity,
-            HostVersion = options.HostVersion,
-            Coil = options.Coil,
-            Note = options.Note,
-            SetUp = options.SetUp,
+            HostVersion = _options.HostVersion,
+            Coil = _options.Coil,
+            Note = _options.Note,
+            SetUp = _options.SetUp,
             F0Hz = double.NaN,
             Q = double.NaN,
             PeakCounts = double.NaN,

@@ -20,7 +20,7 @@ public static class SurveyProcedure
         BoxSession box, DetectorLaw law, double lowHz, double highHz, IWatch watch, CancellationToken cancel)
     {
         (IReadOnlyList<RawPoint> raw, DarkLevel look) = SurveySweep.Run(box, law, lowHz, highHz, 0.5, watch, cancel);
-        var maker = new AmplitudeMaker(new DetectorScale(law), look.Mean);
+        var maker = new AmplitudeMaker(new DetectorScale(Pedestal.Settle(law, look)), look.Mean);
         IReadOnlyList<SurveyPoint> points = SurveySweep.Amplitudes(raw, maker, look.SampleVariance);
         IReadOnlyList<Maximum> maxima = ResponseFinder.Find(points, MostResponses);
         watch.Begin($"looking at {maxima.Count} {(maxima.Count == 1 ? "response" : "responses")}", maxima.Count * 0.15);

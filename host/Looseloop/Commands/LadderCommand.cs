@@ -37,7 +37,7 @@ internal sealed class LadderCommand(Shell shell)
     private int Run(ParseResult parsed)
     {
         using ChosenBox box = BoxChoice.Open(shell, parsed);
-        DetectorLaw declared = box.Law ?? DetectorLaw.Declared(parsed.GetValue(_kind) ?? DetectorKind.RmsLinear, box.Session.Limits().PedestalCounts);
+        DetectorLaw declared = box.Law ?? UndeclaredBox.LawOf(box.Session) with { Kind = parsed.GetValue(_kind) ?? DetectorKind.RmsLinear };
         if (parsed.GetValue(_kind) is DetectorKind kind && kind != declared.Kind)
         {
             declared = DetectorLaw.Declared(kind, declared.PedestalCounts) with { TimeConstantS = declared.TimeConstantS };

@@ -2,7 +2,6 @@ using System.CommandLine;
 using System.Globalization;
 using Looseloop.Arguments;
 using Looseloop.Bench;
-using Looseloop.Box;
 using Looseloop.Boxes;
 using Looseloop.Link;
 using Looseloop.Procedures.Logging;
@@ -141,7 +140,7 @@ internal sealed class LogCommand(Shell shell)
         var plain = new LogOptions { Read = read };
         return plain with
         {
-            LawOf = box => facts.LawOf(name) ?? (world is null ? Declared(box) : BoxChoice.LawOf(world)),
+            LawOf = box => facts.LawOf(name) ?? (world is null ? UndeclaredBox.LawOf(box) : BoxChoice.LawOf(world)),
             Every = Seconds(parsed.GetValue(_every)) ?? plain.Every,
             For = Seconds(parsed.GetValue(_for)),
             UntilSettled = parsed.GetValue(_untilSettled),
@@ -151,8 +150,6 @@ internal sealed class LogCommand(Shell shell)
             Stated = Stated(parsed),
         };
     }
-
-    private static DetectorLaw Declared(BoxSession box) => DetectorLaw.Declared(Readings.DetectorKind.RmsLinear, box.Limits().PedestalCounts);
 
     private Dictionary<string, string> Stated(ParseResult parsed)
     {

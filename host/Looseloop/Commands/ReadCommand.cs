@@ -4,7 +4,6 @@ using Looseloop.Boxes;
 using Looseloop.Procedures.Read;
 using Looseloop.Procedures.Ring;
 using Looseloop.Procedures.Survey;
-using Looseloop.Readings;
 using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Tables;
@@ -57,7 +56,7 @@ internal sealed class ReadCommand(Shell shell)
 
         var options = new ReadOptions
         {
-            Law = box.Law ?? DetectorLaw.Declared(DetectorKind.RmsLinear, box.Session.Limits().PedestalCounts),
+            Law = box.Law ?? UndeclaredBox.LawOf(box.Session),
             NearHz = parsed.GetValue(_near),
             LowHz = low,
             HighHz = high,

@@ -31,7 +31,7 @@ internal sealed class SurveyCommand(Shell shell)
     private int Run(ParseResult parsed)
     {
         using ChosenBox box = BoxChoice.Open(shell, parsed);
-        DetectorLaw law = box.Law ?? DetectorLaw.Declared(DetectorKind.RmsLinear, box.Session.Limits().PedestalCounts);
+        DetectorLaw law = box.Law ?? UndeclaredBox.LawOf(box.Session);
         var progress = new ProgressLine(shell, parsed.GetValue(CommonOptions.Quiet));
         SurveyResult survey;
         try

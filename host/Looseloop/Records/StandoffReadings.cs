@@ -69,7 +69,7 @@ internal sealed class StandoffReadings(Shell shell, RecordStore store, RecordFac
     {
         var options = new ReadOptions
         {
-            Law = declared ?? DetectorLaw.Declared(DetectorKind.RmsLinear, box.Limits().PedestalCounts),
+            Law = declared ?? UndeclaredBox.LawOf(box),
             NearHz = nearHz,
             Coil = coil,
             SetUp = setUp,
