@@ -11,12 +11,13 @@ return args switch
         rest.Contains("-v")),
     ["one", string seed, .. string[] rest] => OneWorld.Run(
         ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture), rest.Length > 0 ? Enum.Parse<Defect>(rest[0]) : null),
+    ["rings", string worlds] => Rings.Run(int.Parse(worlds, System.Globalization.CultureInfo.InvariantCulture)),
     ["ladder", string world, string seed] => Ladders.Show(WorldShelf.Load(world), ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture)),
     _ => Usage(),
 };
 
 static int Usage()
 {
-    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT] | ladder WORLD SEED");
+    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT] | ladder WORLD SEED | rings WORLDS");
     return 2;
 }
