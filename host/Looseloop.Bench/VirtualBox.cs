@@ -105,7 +105,9 @@ public sealed class VirtualBox : IByteLink
     {
         if (!_loop.Step())
         {
-            double next = Math.Min(Clock.Seconds + IdleS, Math.Min(untilS, Board.ToHost.NextArrivalS));
+            // With nothing on either wire an idle board would only look at its port until the caller's time: hours pass at once.
+            bool nothingComes = Board.FromHost.Count == 0 && Board.ToHost.Count == 0;
+            double next = nothingComes ? untilS : Math.Min(Clock.Seconds + IdleS, Math.Min(untilS, Board.ToHost.NextArrivalS));
             Clock.AdvanceTo(next);
         }
     }

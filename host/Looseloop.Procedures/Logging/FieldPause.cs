@@ -24,6 +24,10 @@ internal sealed class FieldPause(DateTimeOffset seen, LimitsAnswer limits, TimeS
     /// <summary>The latest: the begin of the first look that did not.</summary>
     public DateTimeOffset EndedBefore => _quietFrom ?? _lastFieldFrom;
 
+    /// <summary>True if a look saw a field, by the box's own rule.</summary>
+    public static bool Sees(DarkLevel level, LimitsAnswer limits, BoxSession box) =>
+        level.Max > limits.PedestalCounts + limits.FieldCounts || level.Max >= box.Identity.FullCounts;
+
     /// <summary>Looks once more.</summary>
     /// <returns>True once no field has been seen for the lock-out's time.</returns>
     public bool Look(BoxSession box, CancellationToken cancel)
@@ -31,7 +35,7 @@ internal sealed class FieldPause(DateTimeOffset seen, LimitsAnswer limits, TimeS
         DarkLevel level = box.Dark(LookMs, cancel: cancel);
         DateTimeOffset now = box.Time.GetUtcNow();
         DateTimeOffset begun = now - TimeSpan.FromMicroseconds(level.ToUs - level.FromUs);
-        if (level.Max > limits.PedestalCounts + limits.FieldCounts || level.Max >= box.Identity.FullCounts)
+        if (Sees(level, limits, box))
         {
             _lastFieldFrom = begun;
             _quietFrom = null;

@@ -15,6 +15,8 @@ public sealed class LogProcedure
 {
     private static readonly TimeSpan _slice = TimeSpan.FromMilliseconds(250);
     private const double JudgeEveryS = 30;
+    private const int LongLookMs = 1000;
+    private const double LeastSpacingForLooksS = 2;
 
     /// <summary>A shorter wait is none: it would round to nothing and never end.</summary>
     private const double LeastWaitS = 1e-3;
@@ -156,7 +158,7 @@ public sealed class LogProcedure
                         nextS = _writer.NowS;
                     }
                 }
-                else if (WaitUntil(box, nextS))
+                else if (WaitUntil(box, nextS - LeadS) && NoField(box))
                 {
                     TakeReading(box);
                     nextS = NextSlot(nextS);
@@ -176,6 +178,26 @@ public sealed class LogProcedure
                 nextS = NextSlot(nextS);
             }
         }
+    }
+
+    // The box's own looks between sweeps are short, and an interrupted field is silent most of the time: where there is time
+    // for it, a whole second is looked at before each reading.
+    private double LeadS => _options.BetweenRuns || _options.Every.TotalSeconds >= LeastSpacingForLooksS ? LongLookMs * 1e-3 : 0;
+
+    private bool NoField(BoxSession box)
+    {
+        if (RemainingS() <= LeastWaitS)
+        {
+            return false;
+        }
+
+        if (LeadS > 0 && FieldPause.Sees(box.Dark(LongLookMs, cancel: _cancel), _keeper.Limits, box))
+        {
+            BeginPause();
+            return false;
+        }
+
+        return true;
     }
 
     // Slots stand a fixed time apart; those that a long reading or a break has covered are left out, not made up for.
@@ -232,6 +254,11 @@ public sealed class LogProcedure
             }
 
             _writer.Keep(RunEventKind.Note, $"Tracking ended: {Words(step.End)}. A full reading follows.");
+            if (FieldPause.Sees(box.Dark(LongLookMs, cancel: _cancel), _keeper.Limits, box))
+            {
+                BeginPause();
+                return;
+            }
         }
 
         TakeFull(box);
@@ -406,6 +433,7 @@ public sealed class LogProcedure
         TrackEnd.FarFromCurve => "amplitude or Q is far from the last full reading's",
         TrackEnd.DarkMoved => "the level with the drive off has moved",
         TrackEnd.Saturated => "samples reach the converter's upper end",
+        TrackEnd.Disturbed => "single samples stray far beyond their scatter",
         TrackEnd.PointsMissing => "points were lost on the line",
         _ => "there is no curve to track on",
     };

@@ -24,6 +24,9 @@ public enum TrackEnd
     /// <summary>Samples reach the converter's upper end.</summary>
     Saturated,
 
+    /// <summary>Single samples stray far beyond their scatter: bursts, or a field that has begun.</summary>
+    Disturbed,
+
     /// <summary>Points were lost on the line.</summary>
     PointsMissing,
 }

@@ -126,6 +126,11 @@ public sealed class Tracker(ReadOptions options)
             return TrackEnd.Saturated;
         }
 
+        if (Disturbed(basis, sweep.Points))
+        {
+            return TrackEnd.Disturbed;
+        }
+
         if (DarkMoved(basis, sweep.Look))
         {
             return TrackEnd.DarkMoved;
@@ -158,6 +163,14 @@ public sealed class Tracker(ReadOptions options)
 
         double noise = Math.Sqrt(points.Average(point => point.Variance)) / (amplitude * Math.Sqrt(basis.Curve.PeakPower));
         return fit.ResidualRatio > Math.Max(HarmlessResidual, 5 * noise) ? TrackEnd.OtherCurve : TrackEnd.None;
+    }
+
+    /// <summary>Noise of a hundred samples strays by some four standard deviations.</summary>
+    private static bool Disturbed(TrackBasis basis, IReadOnlyList<RawPoint> points)
+    {
+        double[] sigmas = [.. points.Select(point => Math.Sqrt(point.SampleVariance)).Order()];
+        double allowed = Math.Max(8 * sigmas[sigmas.Length / 2], 0.02 * basis.PeakCounts);
+        return points.Any(point => Math.Max(point.Max - point.Mean, point.Mean - point.Min) > allowed);
     }
 
     private static bool DarkMoved(TrackBasis basis, DarkLevel look)
