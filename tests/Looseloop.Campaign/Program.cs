@@ -13,11 +13,13 @@ return args switch
         ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture), rest.Length > 0 ? Enum.Parse<Defect>(rest[0]) : null),
     ["rings", string worlds] => Rings.Run(int.Parse(worlds, System.Globalization.CultureInfo.InvariantCulture)),
     ["ladder", string world, string seed] => Ladders.Show(WorldShelf.Load(world), ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture)),
+    ["cool-downs", string worlds] => CoolDowns.Run(int.Parse(worlds, System.Globalization.CultureInfo.InvariantCulture)),
+    ["log-memory", string hours] => LogMemory.Run(int.Parse(hours, System.Globalization.CultureInfo.InvariantCulture)),
     _ => Usage(),
 };
 
 static int Usage()
 {
-    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT] | ladder WORLD SEED | rings WORLDS");
+    Console.Error.WriteLine("usage: campaign coverage WORLD SEEDS | random WORLDS [FIRST-SEED [DEFECT]] [-v] | one SEED [DEFECT] | ladder WORLD SEED | rings WORLDS | cool-downs WORLDS | log-memory HOURS");
     return 2;
 }

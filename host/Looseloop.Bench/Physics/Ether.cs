@@ -27,6 +27,20 @@ internal sealed class Ether
 
     public bool Silent => _carriers.Length == 0;
 
+    /// <summary>True if every carrier has ended for good, and its trace in the low-pass too.</summary>
+    public bool IsOver(double timeS)
+    {
+        foreach (Carrier carrier in _carriers)
+        {
+            if (!(timeS > carrier.ToS + (40 * _timeConstantS)))
+            {
+                return false;
+            }
+        }
+
+        return true;
+    }
+
     /// <summary>Must be called after the drive has changed: finds which carriers beat slowly with a harmonic.</summary>
     public void Enter(CoilResponse response)
     {

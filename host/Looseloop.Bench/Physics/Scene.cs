@@ -77,7 +77,7 @@ internal sealed class Scene
         if (!_cached)
         {
             double volts = DetectorVolts(timeS);
-            if (_plain && !_drifts && _detector.Settled(timeS))
+            if (IsSteady(timeS) && _detector.Settled(timeS))
             {
                 _cached = true;
                 _cachedSignal = volts;
@@ -120,6 +120,9 @@ internal sealed class Scene
         double volts = _world.Converter.FullScaleVolts * ratio / (1 + ratio);
         return _converter.Convert(_converter.Level(volts), 0);
     }
+
+    // Without a drive a drift shows nowhere, and a carrier that has ended for good is as good as none.
+    private bool IsSteady(double timeS) => (_plain || (!_disturbance.Modulates && _ether.IsOver(timeS))) && (!_drifts || !_response.Drives);
 
     private int Convert(double volts, double timeS)
     {

@@ -1,4 +1,5 @@
 using Looseloop.Drift;
+using Looseloop.Procedures.Tracking;
 using Looseloop.Readings;
 
 namespace Looseloop.Procedures.Logging;
@@ -22,12 +23,17 @@ internal sealed class CoolDownWatch(DateTimeOffset stopUtc, double stopS, double
     /// <returns>True if it is worth extrapolating anew: at twice as many readings as the last time.</returns>
     public bool Add(Reading reading, LogPoint point)
     {
-        if (point.TimeS <= stopS)
+        // A full reading stands off the tracked ones by what those have in common: in a fit over time that looks like a fast
+        // term, which the extrapolation would blow up. It is only their basis here. For the same reason a point counts with
+        // all of its repeatability, for the readings on the next curve stand off again.
+        if (point.TimeS <= stopS || !TrackedReading.Is(reading))
         {
             return false;
         }
 
-        _history.Add(point);
+        double f0 = reading.Budget.F0Hz(absolute: false);
+        double q = reading.Q * reading.Budget.QRelative(absolute: false);
+        _history.Add(point with { F0Variance = f0 * f0, QVariance = q * q });
         _readings++;
         _f0Common = Math.Max(_f0Common, CommonF0(reading));
         _qCommon = Math.Max(_qCommon, CommonQ(reading));
@@ -38,15 +44,32 @@ internal sealed class CoolDownWatch(DateTimeOffset stopUtc, double stopS, double
     public FieldEnd? Extrapolate()
     {
         _nextCount = Math.Max(_nextCount, 2 * _readings);
-        CoolDown? f0 = CoolDown.Extrapolate(_history.F0(), stopS, stopStandardS);
+        CoolDown? f0 = Determined(_history.F0());
         if (f0 is null)
         {
             return null;
         }
 
-        CoolDown? q = CoolDown.Extrapolate(_history.Q(), stopS, stopStandardS);
+        CoolDown? q = Determined(_history.Q());
         Last = new FieldEnd(stopUtc, stopStandardS, _readings, f0, q, _f0Common, _qCommon);
         return Last;
+    }
+
+    /// <summary>Null where the extrapolation says less than that the value was somewhere near the readings.</summary>
+    private CoolDown? Determined(DriftSeries series)
+    {
+        CoolDown? cool = CoolDown.Extrapolate(series, stopS, stopStandardS);
+        double low = double.PositiveInfinity;
+        double high = double.NegativeInfinity;
+        double standard = 0;
+        for (int i = 0; i < series.Count; i++)
+        {
+            low = Math.Min(low, series.Value[i]);
+            high = Math.Max(high, series.Value[i]);
+            standard = Math.Max(standard, series.Standard[i]);
+        }
+
+        return cool is not null && cool.AtStopStandard <= (high - low) + (2 * standard) ? cool : null;
     }
 
     private static double CommonF0(Reading reading) => ReadingTerms.CommonF0Hz(reading);

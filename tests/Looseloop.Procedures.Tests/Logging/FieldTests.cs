@@ -12,7 +12,7 @@ public class FieldTests(ITestOutputHelper output)
     [Fact]
     public void Cool_downs_are_extrapolated_back_to_the_end_of_the_field()
     {
-        const int Worlds = 24;
+        const int Worlds = 12;
         var random = new Random(7);
         int f0Covered = 0;
         int qCovered = 0;
@@ -45,9 +45,9 @@ public class FieldTests(ITestOutputHelper output)
         output.WriteLine($"f0 covered {f0Covered}, Q covered {qCovered}, field seen {seen} of {Worlds}");
         Assert.Equal(Worlds, seen);
 
-        // 95 % of 24 are 22.8; three short of it come to pass once in some hundred seeds.
-        Assert.True(f0Covered >= Worlds - 4, $"f0 covered in {f0Covered} of {Worlds}");
-        Assert.True(qCovered >= Worlds - 4, $"Q covered in {qCovered} of {Worlds}");
+        // 95 % of 12 are 11.4; with four missing from 12 the rate would be far below it (once in 500 seeds at 95 %).
+        Assert.True(f0Covered >= Worlds - 3, $"f0 covered in {f0Covered} of {Worlds}");
+        Assert.True(qCovered >= Worlds - 3, $"Q covered in {qCovered} of {Worlds}");
     }
 
     [Fact]
