@@ -8,6 +8,7 @@ using Looseloop.Procedures.Logging;
 using Looseloop.Procedures.Read;
 using Looseloop.Readings;
 using Looseloop.Record;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 
@@ -16,8 +17,6 @@ namespace Looseloop.Commands;
 /// <summary><c>log</c>: f0 and Q over hours, in the record.</summary>
 internal sealed class LogCommand(Shell shell)
 {
-    private const string RecordVariable = "LOOSELOOP_RECORD";
-
     private readonly Option<double?> _for = Quantity.SecondsOption("--for", "For how long (until interrupted).");
     private readonly Option<double?> _every = Quantity.SecondsOption("--every", "From reading to reading (10s); 0 for one after the other.");
     private readonly Option<double?> _fullEvery = Quantity.SecondsOption("--full-every", "From full reading to full reading (15min); five settings each are read between.");
@@ -27,12 +26,6 @@ internal sealed class LogCommand(Shell shell)
     private readonly Option<string?> _coil = new("--coil") { Description = "The coil's name.", HelpName = "NAME" };
     private readonly Option<string?> _note = new("--note") { Description = "A note to the run.", HelpName = "TEXT" };
     private readonly Option<bool> _untilSettled = new("--until-settled") { Description = "End when f0 is settled." };
-
-    private readonly Option<string?> _record = new("--record")
-    {
-        Description = $"The record (default: ${RecordVariable}, or {RecordFolder.FileName} in the user's data folder).",
-        HelpName = "FILE",
-    };
 
     private readonly Option<bool> _betweenRuns = new("--between-runs")
     {
@@ -45,7 +38,7 @@ internal sealed class LogCommand(Shell shell)
     {
         var command = new Command("log", "Read f0 and Q again and again, into the record, until the time is up, f0 is settled, or you interrupt.")
         {
-            Options = { _for, _every, _untilSettled, _betweenRuns, _lockOut, _fullEvery, _near, _mains, _coil, _note, _record },
+            Options = { _for, _every, _untilSettled, _betweenRuns, _lockOut, _fullEvery, _near, _mains, _coil, _note, RecordChoice.RecordOption },
         };
         BoxChoice.AddTo(command);
         command.SetAction(Run);
@@ -68,7 +61,7 @@ internal sealed class LogCommand(Shell shell)
             throw new UserError("Nothing was done.", ExitCode.Failure);
         }
 
-        using RecordStore store = OpenRecord(parsed);
+        using RecordStore store = RecordChoice.OpenForWriting(shell, parsed);
         using TextWriter? trace = parsed.GetValue(BoxChoice.TraceOption) is string path ? new StreamWriter(path) { AutoFlush = true } : null;
         IBoxSource source = world is null ? new PortSource(name, trace) : new BenchSource(new VirtualBox(world, parsed.GetValue(BoxChoice.SeedOption)), trace);
         LogOptions options = Options(parsed, name, world, new RecordFacts(store, AppVersion.Text));
@@ -84,26 +77,6 @@ internal sealed class LogCommand(Shell shell)
         };
     }
 
-    private RecordStore OpenRecord(ParseResult parsed)
-    {
-        try
-        {
-            string path = parsed.GetValue(_record) ?? shell.Environment(RecordVariable) ?? RecordFolder.DefaultFile();
-            RecordStore store = RecordStore.Open(path, shell.Time.GetUtcNow());
-            if (store.ClosedAtOpening.Count > 0)
-            {
-                shell.Say(
-                    $"Run {string.Join(", ", store.ClosedAtOpening)} had no end: its program was stopped before it could write one. What it had saved is kept, and it is marked as interrupted.");
-            }
-
-            return store;
-        }
-        catch (RecordException error)
-        {
-            throw new UserError(error.Message, ExitCode.Failure);
-        }
-    }
-
     private static LogSummary RunLog(LogProcedure log)
     {
         try
@@ -113,10 +86,6 @@ internal sealed class LogCommand(Shell shell)
         catch (LinkOpenException error)
         {
             throw new UserError(error.Message, ExitCode.NoBox);
-        }
-        catch (RecordException error)
-        {
-            throw new UserError(error.Message, ExitCode.Failure);
         }
     }
 
