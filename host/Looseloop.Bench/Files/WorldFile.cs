@@ -135,8 +135,8 @@ internal sealed class WorldFile
             Volts = section.Needed("volts", 0, 1000),
             PeriodS = section.Number("period_s", 0, 0, 3600),
             OnS = section.Number("on_s", 0, 0, 3600),
-            FromS = section.Number("from_s", double.NegativeInfinity, 0, 1e6),
-            ToS = section.Number("to_s", double.PositiveInfinity, 0, 1e6),
+            FromS = section.Number("from_s", 0),
+            ToS = section.Number("to_s", double.PositiveInfinity, 0, double.PositiveInfinity),
         });
         return One("room", new Room(), (section, ordinary) => new Room
         {

@@ -59,7 +59,7 @@ public sealed record Carrier
     public double OnS { get; init; }
 
     /// <summary>It is silent before this time, seconds from the world's begin.</summary>
-    public double FromS { get; init; } = double.NegativeInfinity;
+    public double FromS { get; init; }
 
     /// <summary>It is silent from this time on, seconds from the world's begin: an energised run that ends.</summary>
     public double ToS { get; init; } = double.PositiveInfinity;
