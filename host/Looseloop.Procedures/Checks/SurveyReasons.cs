@@ -50,7 +50,7 @@ public static class SurveyReasons
         foreach (Response response in survey.Responses)
         {
             double distance = Math.Abs(response.FrequencyHz - f0);
-            if (response.Kind == ResponseKind.Neighbour && distance < 20 * bandwidth)
+            if (response.Kind == ResponseKind.Neighbour)
             {
                 yield return new Reason(
                     ReasonCode.TwoResponses,

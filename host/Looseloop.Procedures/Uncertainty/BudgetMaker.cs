@@ -53,7 +53,7 @@ public static class BudgetMaker
             FeedThroughSlope(m),
             Dwell(m),
             DriveStrength(m, "drive strength", m.Edges.Uncertainty, true, Measured(m)),
-            DriveStrength(m, "grid and duty", SecondOrderOfEdges, false, "second order of uneven edges"),
+            DriveStrength(m, "grid and duty", EdgeShare(m), false, "second order of uneven edges"),
         };
         if (!m.Options.Law.RespondsToPower)
         {
@@ -114,7 +114,7 @@ public static class BudgetMaker
     private static BudgetLine Law(Measurement m, double root3)
     {
         bool read = m.Options.Law.ReadOn is not null;
-        double bow = read ? ReadBow : UnreadBow;
+        double bow = !read ? UnreadBow : m.Options.Law.BowBound > 0 ? m.Options.Law.BowBound : ReadBow;
         double peak = m.FitPoints.Max(point => point.Amplitude);
         ResonanceFit bent = m.Refit(raw =>
         {
@@ -178,6 +178,22 @@ public static class BudgetMaker
             [.. m.FitPoints.Select(point => point.Group == 0 ? point with { DriveWeight = point.DriveWeight * (1 + change) } : point)], m.FitOptions);
         return new BudgetLine(
             term, Math.Abs(other.F0Hz - m.Fit.F0Hz), Math.Abs((other.Q / m.Fit.Q) - 1), repeatability, double.PositiveInfinity, origin);
+    }
+
+    /// <summary>
+    /// At duty 1/2 an edge error of d periods leaves the n-th harmonic cos(n pi d) of its strength; at f0/n that is the same
+    /// for every n. Where a ladder has measured the edges, its figure counts, else the stated bound.
+    /// </summary>
+    private static double EdgeShare(Measurement m)
+    {
+        DetectorLaw law = m.Options.Law;
+        if (!(law.HighExtraUncertaintyS > 0))
+        {
+            return SecondOrderOfEdges;
+        }
+
+        double angle = Math.PI * m.Fit.F0Hz * (Math.Abs(law.HighExtraS) + law.HighExtraUncertaintyS);
+        return angle * angle / 2;
     }
 
     private static string Measured(Measurement m) =>
