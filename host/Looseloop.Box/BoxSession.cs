@@ -10,9 +10,9 @@ namespace Looseloop.Box;
 /// </summary>
 public sealed class BoxSession : IDisposable
 {
-    private static readonly TimeSpan AnswerTime = TimeSpan.FromSeconds(1);
-    private static readonly TimeSpan QuietTime = TimeSpan.FromMilliseconds(700);
-    private static readonly TimeSpan HaltTime = TimeSpan.FromMilliseconds(500);
+    private static readonly TimeSpan _answerTime = TimeSpan.FromSeconds(1);
+    private static readonly TimeSpan _quietTime = TimeSpan.FromMilliseconds(700);
+    private static readonly TimeSpan _haltTime = TimeSpan.FromMilliseconds(500);
     private const int Tries = 3;
 
     private readonly LineChannel _channel;
@@ -58,7 +58,7 @@ public sealed class BoxSession : IDisposable
             cancel.ThrowIfCancellationRequested();
             channel.Send(Verb.Identify);
             long asked = channel.Now;
-            while (channel.Since(asked) < AnswerTime && channel.Receive(AnswerTime - channel.Since(asked)) is BoxMessage message)
+            while (channel.Since(asked) < _answerTime && channel.Receive(_answerTime - channel.Since(asked)) is BoxMessage message)
             {
                 if (message is BoxAnswer answer)
                 {
@@ -170,7 +170,7 @@ public sealed class BoxSession : IDisposable
         {
             _channel.Send(Verb.Halt);
             long begun = _channel.Now;
-            while (_channel.Since(begun) < HaltTime && _channel.Receive(HaltTime) is BoxMessage message && message is not HaltedAnswer)
+            while (_channel.Since(begun) < _haltTime && _channel.Receive(_haltTime) is BoxMessage message && message is not HaltedAnswer)
             {
             }
         }
@@ -251,7 +251,7 @@ public sealed class BoxSession : IDisposable
         {
             long asked = _channel.Now;
             bool garbled = false;
-            while (!garbled && _channel.Since(asked) < AnswerTime && _channel.Receive(AnswerTime - _channel.Since(asked)) is BoxMessage message)
+            while (!garbled && _channel.Since(asked) < _answerTime && _channel.Receive(_answerTime - _channel.Since(asked)) is BoxMessage message)
             {
                 switch (message)
                 {
@@ -289,7 +289,7 @@ public sealed class BoxSession : IDisposable
             cancel.ThrowIfCancellationRequested();
         }
 
-        BoxMessage? message = _channel.Receive(QuietTime, keepAwake: true);
+        BoxMessage? message = _channel.Receive(_quietTime, keepAwake: true);
         if (message is null)
         {
             Halt();

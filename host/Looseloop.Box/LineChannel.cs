@@ -6,8 +6,8 @@ namespace Looseloop.Box;
 /// <summary>Lines to and from a box: numbers requests, checks what comes back, keeps the box awake, counts what went wrong.</summary>
 internal sealed class LineChannel(IByteLink link)
 {
-    private static readonly TimeSpan KeepAfter = TimeSpan.FromMilliseconds(500);
-    private static readonly TimeSpan Slice = TimeSpan.FromMilliseconds(100);
+    private static readonly TimeSpan _keepAfter = TimeSpan.FromMilliseconds(500);
+    private static readonly TimeSpan _slice = TimeSpan.FromMilliseconds(100);
 
     private readonly LineWriter _writer = new(WireLimits.HostLineBytes);
     private readonly LineCollector _collector = new(WireLimits.BoxLineBytes);
@@ -48,7 +48,7 @@ internal sealed class LineChannel(IByteLink link)
     /// <summary>Sends <c>keep</c> if the box has heard nothing for a while. It has a number of its own and no answer.</summary>
     public void KeepAwake()
     {
-        if (Since(_lastSent) >= KeepAfter)
+        if (Since(_lastSent) >= _keepAfter)
         {
             Compose(_request, Verb.Keep, []);
             Resend();
@@ -81,7 +81,7 @@ internal sealed class LineChannel(IByteLink link)
                 KeepAwake();
             }
 
-            _receivedCount = link.Read(_received, left < Slice ? left : Slice);
+            _receivedCount = link.Read(_received, left < _slice ? left : _slice);
             _receivedNext = 0;
         }
     }

@@ -11,8 +11,8 @@ public static class HarmonicTest
     /// <summary>Relative error that detectors, edges and drift may put on a ratio.</summary>
     private const double Tolerance = 0.06;
 
-    /// <summary>Orders that the two duties tell apart; higher odd ones look like 1 or 3 and are found by a look at n times f.</summary>
-    private static readonly int[] Orders = [1, 3, 5, 2, 4];
+    /// <summary>_orders that the two duties tell apart; higher odd ones look like 1 or 3 and are found by a look at n times f.</summary>
+    private static readonly int[] _orders = [1, 3, 5, 2, 4];
 
     /// <summary>The ratio of amplitudes that the n-th harmonic makes at two settings of one frequency.</summary>
     public static double Ratio(int order, Setting low, Setting high) =>
@@ -26,7 +26,7 @@ public static class HarmonicTest
     public static int Order(double ratio, double uncertainty, Setting low, Setting high)
     {
         int found = 0;
-        foreach (int order in Orders)
+        foreach (int order in _orders)
         {
             double expected = Ratio(order, low, high);
             double allowance = Math.Sqrt((9 * uncertainty * uncertainty) + (Tolerance * Tolerance));

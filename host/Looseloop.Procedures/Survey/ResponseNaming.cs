@@ -13,7 +13,7 @@ public static class ResponseNaming
     private const double OvertoneFrom = 1.7;
 
     /// <summary>Odd orders that look like a real response or a third harmonic at duty 1/5.</summary>
-    private static readonly int[] HighOrders = [7, 9, 11, 13, 15, 17, 19];
+    private static readonly int[] _highOrders = [7, 9, 11, 13, 15, 17, 19];
 
     /// <summary>Names them, ascending in frequency.</summary>
     public static IReadOnlyList<Response> Name(IReadOnlyList<CloseLook.Finding> findings)
@@ -37,7 +37,7 @@ public static class ResponseNaming
         // The n-th harmonic is 1/n as strong as the fundamental, so a ghost has n times itself at n times its frequency.
         if (order is 1 or 3 or 0)
         {
-            order = Array.Find(HighOrders, high => IsGhostOf(finding, all, high)) is int high and > 0 ? high : order;
+            order = Array.Find(_highOrders, high => IsGhostOf(finding, all, high)) is int high and > 0 ? high : order;
         }
 
         ResponseKind kind = order switch

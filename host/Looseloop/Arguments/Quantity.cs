@@ -6,26 +6,36 @@ namespace Looseloop.Arguments;
 /// <summary>Quantities as people write them on a command line: 152k, 152.3kHz, 5s, 250ms, 8h.</summary>
 internal static class Quantity
 {
-    private static readonly Dictionary<string, double> Hertz = new(StringComparer.OrdinalIgnoreCase)
+    private static readonly Dictionary<string, double> _hertz = new(StringComparer.OrdinalIgnoreCase)
     {
-        [""] = 1, ["hz"] = 1, ["k"] = 1e3, ["khz"] = 1e3, ["m"] = 1e6, ["mhz"] = 1e6,
+        [""] = 1,
+        ["hz"] = 1,
+        ["k"] = 1e3,
+        ["khz"] = 1e3,
+        ["m"] = 1e6,
+        ["mhz"] = 1e6,
     };
 
-    private static readonly Dictionary<string, double> Seconds = new(StringComparer.OrdinalIgnoreCase)
+    private static readonly Dictionary<string, double> _seconds = new(StringComparer.OrdinalIgnoreCase)
     {
-        [""] = 1, ["s"] = 1, ["ms"] = 1e-3, ["min"] = 60, ["m"] = 60, ["h"] = 3600,
+        [""] = 1,
+        ["s"] = 1,
+        ["ms"] = 1e-3,
+        ["min"] = 60,
+        ["m"] = 60,
+        ["h"] = 3600,
     };
 
     /// <summary>An option in hertz, with k, kHz, M or MHz behind the number.</summary>
     public static Option<double?> HertzOption(string name, string description) =>
-        Option(name, description, Hertz, "a frequency such as 152k, 152.3kHz or 152300");
+        Option(name, description, _hertz, "a frequency such as 152k, 152.3kHz or 152300");
 
     /// <summary>An option in seconds, with ms, s, min or h behind the number.</summary>
     public static Option<double?> SecondsOption(string name, string description) =>
-        Option(name, description, Seconds, "a time such as 5s, 250ms, 20min or 8h");
+        Option(name, description, _seconds, "a time such as 5s, 250ms, 20min or 8h");
 
     /// <summary>Reads hertz.</summary>
-    public static bool TryHertz(string text, out double hertz) => TryRead(text, Hertz, out hertz);
+    public static bool TryHertz(string text, out double hertz) => TryRead(text, _hertz, out hertz);
 
     private static Option<double?> Option(string name, string description, Dictionary<string, double> units, string wanted) => new(name)
     {
