@@ -5,8 +5,12 @@ using Looseloop.Link;
 namespace Looseloop.CommandLine.Tests;
 
 /// <summary>The same world through a real tty: System.IO.Ports on a pseudo-terminal, in real time.</summary>
-public class PtyReadingTests
+public sealed class PtyReadingTests : IDisposable
 {
+    private readonly string _folder = Directory.CreateTempSubdirectory("looseloop-tty").FullName;
+
+    public void Dispose() => Directory.Delete(_folder, recursive: true);
+
     [Fact]
     public async Task A_box_on_a_tty_reads_as_it_does_in_the_process()
     {
@@ -19,7 +23,7 @@ public class PtyReadingTests
         using var box = new VirtualBox(WorldShelf.Load("wren"), seed: 7);
         using var stop = new CancellationTokenSource();
         Task server = Task.Run(() => new BenchServer(box, line).Run(stop.Token));
-        AppRun onTty = AppRun.Of("read", "--box", line.SlavePath, "--near", "150k", "--json", "--quiet");
+        AppRun onTty = Read("--box", line.SlavePath, "--near", "150k", "--json", "--quiet");
         await stop.CancelAsync();
         await server;
         AppRun inProcess = AppRun.Of("read", "--box", "bench", "--near", "150k", "--json", "--quiet");
@@ -53,7 +57,7 @@ public class PtyReadingTests
                 // that is the unplugging
             }
         });
-        Task<AppRun> reading = Task.Run(() => AppRun.Of("read", "--box", line.SlavePath));
+        Task<AppRun> reading = Task.Run(() => Read("--box", line.SlavePath));
         await Task.Delay(TimeSpan.FromSeconds(2.5));
         line.Dispose();
         AppRun run = await reading;
@@ -82,12 +86,16 @@ public class PtyReadingTests
                 await Task.Delay(50);
             }
         });
-        AppRun run = AppRun.Of("read", "--box", line.SlavePath);
+        AppRun run = Read("--box", line.SlavePath);
         await stop.CancelAsync();
         await chatter;
         Assert.Equal(3, run.ExitCode);
         Assert.Contains("something else is talking", run.Error);
     }
+
+    /// <summary>A box on a tty is no practice: its readings are kept, here in a record of the test's own.</summary>
+    private AppRun Read(params string[] args) =>
+        AppRun.With(new Dictionary<string, string> { ["LOOSELOOP_RECORD"] = Path.Combine(_folder, "record.db") }, ["read", .. args]);
 
     /// <summary>Two readings of different noise: their difference within 3 standard uncertainties of a difference.</summary>
     private static void Agree(JsonDocument one, JsonDocument other, string value, string interval)

@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Readings;
 using Looseloop.Record;
+using Looseloop.Records;
 using Looseloop.Terminal;
 
 namespace Looseloop.Coils;
@@ -18,17 +19,6 @@ internal sealed record FrequencySource(
     double F0Hz, double RepeatabilityHz, double AbsoluteHz, double Q, string From, Verdict Verdict, IReadOnlyDictionary<string, string> SetUp)
 {
     private static readonly Dictionary<string, string> _nothing = [];
-
-    /// <summary>Names the record where the command line does not.</summary>
-    public static readonly Option<string?> RecordOption = new("--record")
-    {
-        Description = "The record to take readings from (default: $LOOSELOOP_RECORD, or the user's own).",
-        HelpName = "FILE",
-    };
-
-    /// <summary>The record's file: flag, then $LOOSELOOP_RECORD, then the user's own.</summary>
-    public static string RecordPath(Shell shell, ParseResult parsed) =>
-        parsed.GetValue(RecordOption) ?? shell.Environment("LOOSELOOP_RECORD") ?? RecordFolder.DefaultFile();
 
     /// <summary>Whether the reading was of the primary tank and not of the secondary.</summary>
     public bool IsOfPrimary => SetUp.TryGetValue("of", out string? of) && of == "primary";
@@ -57,7 +47,7 @@ internal sealed record FrequencySource(
             return Given(hertz);
         }
 
-        return FromRecord(RecordPath(shell, parsed), words);
+        return FromRecord(RecordChoice.PathOf(shell, parsed), words);
     }
 
     /// <summary>Says on the error stream that a doubtful reading is one.</summary>

@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Coil;
 using Looseloop.Coils;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 using Spectre.Console;
@@ -22,7 +23,7 @@ internal sealed class CoupleCommand(Shell shell)
         var command = new Command("couple", "Coupling coefficient k from readings of the secondary with the primary open and shorted.")
         {
             Arguments = { _open, _shorted },
-            Options = { _uncertainty, FrequencySource.RecordOption },
+            Options = { _uncertainty, RecordChoice.RecordOption },
         };
         command.SetAction(Run);
         return command;

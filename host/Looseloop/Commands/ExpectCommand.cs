@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Coil;
 using Looseloop.Coils;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 
@@ -29,7 +30,7 @@ internal sealed class ExpectCommand(Shell shell)
     {
         var command = new Command("expect", "From a coil's geometry: f1 and overtones, L, C, the bound on Q, and how sure that is.")
         {
-            Options = { _against, FrequencySource.RecordOption, _sweep, _target, _vary, _profile, _sensitivities },
+            Options = { _against, RecordChoice.RecordOption, _sweep, _target, _vary, _profile, _sensitivities },
         };
         _coil.AddTo(command);
         command.SetAction(Run);

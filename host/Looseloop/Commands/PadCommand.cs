@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Coil;
 using Looseloop.Coils;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 using Spectre.Console;
@@ -27,7 +28,7 @@ internal sealed class PadCommand(Shell shell)
         var command = new Command("pad", "Effective L and C at the top terminal from readings with and without a known capacitor.")
         {
             Arguments = { _without, _with },
-            Options = { _pf, _firstPf, _padUncertainty, _uncertainty, FrequencySource.RecordOption },
+            Options = { _pf, _firstPf, _padUncertainty, _uncertainty, RecordChoice.RecordOption },
         };
         command.SetAction(Run);
         return command;

@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Coil;
 using Looseloop.Coils;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 using Spectre.Console;
@@ -26,7 +27,7 @@ internal sealed class ProbeCommand(Shell shell)
     {
         var command = new Command("probe", "What a probe on the top would have made a coil read, and the capacitance that explains two readings.")
         {
-            Options = { _pf, _lead, _leadHeight, _leadDiameter, _own, _without, _with, FrequencySource.RecordOption },
+            Options = { _pf, _lead, _leadHeight, _leadDiameter, _own, _without, _with, RecordChoice.RecordOption },
         };
         _coil.AddTo(command);
         command.SetAction(Run);

@@ -23,15 +23,22 @@ internal sealed class ReadCommand(Shell shell)
     private readonly Option<bool> _budget = new("--budget") { Description = "Show the uncertainty budget." };
     private readonly Option<string?> _save = new("--save") { Description = "Write the points to a CSV file.", HelpName = "FILE" };
     private readonly Option<string?> _coil = new("--coil") { Description = "The coil's name.", HelpName = "NAME" };
+    private readonly Option<string?> _of = new("--of")
+    {
+        Description = "What is read: secondary (as it is without this), or primary: the primary tank, the secondary away or shorted.",
+        HelpName = "WHAT",
+    };
+
     private readonly Option<string?> _note = new("--note") { Description = "A note to the reading.", HelpName = "TEXT" };
 
     public static Command Create(Shell shell) => new ReadCommand(shell).Make();
 
     private Command Make()
     {
+        _of.AcceptOnlyFromAmong("primary", "secondary");
         var command = new Command("read", "Read f0 and Q of a coil that is not energised, with uncertainty and verdict.")
         {
-            Options = { _near, _from, _to, _delay, _mains, _ring, _budget, _save, _coil, _note, RecordChoice.RecordOption },
+            Options = { _near, _from, _to, _delay, _mains, _ring, _budget, _save, _coil, _of, _note, RecordChoice.RecordOption },
         };
         BoxChoice.AddTo(command);
         command.SetAction(Run);
@@ -68,6 +75,12 @@ internal sealed class ReadCommand(Shell shell)
             Time = shell.Time,
         };
         options = KnownFacts.Apply(shell, parsed, options, box.Session.Identity.Port);
+        if (parsed.GetValue(_of) == "primary")
+        {
+            // What stands with the secondary says nothing of a tank that is read alone.
+            options = options with { SetUp = new Dictionary<string, string> { ["of"] = "primary" }, Pull = null };
+        }
+
         var progress = new ProgressLine(shell, quiet);
         ReadOutcome outcome;
         try

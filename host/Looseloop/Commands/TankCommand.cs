@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Coil;
 using Looseloop.Coils;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 
@@ -31,7 +32,7 @@ internal sealed class TankCommand(Shell shell)
     {
         var command = new Command("tank", "The primary for a secondary: tap table, capacitor, coupling, currents, cold and loaded.")
         {
-            Options = { _f0, _against, _of, _tap, _capacitor, _bus, _step, FrequencySource.RecordOption },
+            Options = { _f0, _against, _of, _tap, _capacitor, _bus, _step, RecordChoice.RecordOption },
         };
         _loaded.AddTo(command);
         _coil.AddTo(command);

@@ -2,6 +2,7 @@ using System.CommandLine;
 using Looseloop.Arguments;
 using Looseloop.Coil;
 using Looseloop.Coils;
+using Looseloop.Records;
 using Looseloop.Rendering;
 using Looseloop.Terminal;
 
@@ -27,7 +28,7 @@ internal sealed class WindowCommand(Shell shell)
     {
         var command = new Command("window", "How far a driver may be off f0 for a fraction of the amplitude, and whether a fixed oscillator will do.")
         {
-            Options = { _f0, _q, _against, _fraction, _oscillator, _component, _topPf, _run, FrequencySource.RecordOption },
+            Options = { _f0, _q, _against, _fraction, _oscillator, _component, _topPf, _run, RecordChoice.RecordOption },
         };
         _loaded.AddTo(command);
         _coil.AddTo(command);
@@ -64,7 +65,7 @@ internal sealed class WindowCommand(Shell shell)
         WindowFigures figures = CoilWork.Run(() => WindowFigures.Of(f0, q, isBound, loaded, topF, fractions, resonant, component));
         if (parsed.GetValue(_run) is long run)
         {
-            figures = figures with { Exit = WarmUpExit.Of(FrequencySource.RecordPath(shell, parsed), run, figures.Cold[0]) };
+            figures = figures with { Exit = WarmUpExit.Of(RecordChoice.PathOf(shell, parsed), run, figures.Cold[0]) };
         }
 
         if (parsed.GetValue(CommonOptions.Json))
