@@ -18,7 +18,7 @@ public sealed record MeasurePlan(
     private const int MostVisits = 6;
 
     /// <summary>Time on air of a reading, seconds; more where a ring is long.</summary>
-    private const double OnAirS = 0.9;
+    private const double OnAirS = 0.65;
 
     /// <summary>What a point costs beside dwell and samples: the timer, and its line of text.</summary>
     private const double PointS = 0.006;

@@ -14,8 +14,8 @@ namespace Looseloop.Procedures.Read;
 /// </summary>
 public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch watch, CancellationToken cancel)
 {
-    /// <summary>Long enough for whole periods of 50 and of 60 Hz mains, milliseconds.</summary>
-    private const int DarkMs = 100;
+    /// <summary>A dark level is taken over this many whole mains periods.</summary>
+    private const double DarkPeriods = 3;
 
     /// <summary>Ring times until what is left of the own ring is below a thousandth of a count.</summary>
     private const double RingsToDie = 15;
@@ -136,7 +136,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
     {
         double seconds = RingsToDie * (target.RingTimeS + _options.Law.TimeConstantS);
         box.Pause(TimeSpan.FromSeconds(seconds));
-        return box.Dark(DarkMs, cancel: cancel);
+        return box.Dark((int)Math.Round(1000 * DarkPeriods / _options.MainsHz), cancel: cancel);
     }
 
     /// <summary>Two settings on either flank, where a sweep that is too fast shows most, and the one nearest the top.</summary>
