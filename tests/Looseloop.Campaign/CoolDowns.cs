@@ -24,7 +24,7 @@ public static class CoolDowns
         Console.WriteLine($"  f0: held {Share(extrapolated, r => r.F0Held)}; interval {Middle(extrapolated, r => r.F0IntervalHz):0.00} Hz, largest {extrapolated.Max(r => r.F0IntervalHz):0.00} Hz, error {Middle(extrapolated, r => r.F0ErrorHz):+0.000;-0.000} Hz (medians), worst {extrapolated.Max(r => Math.Abs(r.F0ErrorHz)):0.00} Hz, cooled by {extrapolated.Average(r => r.CooledHz):0} Hz");
         foreach (Result far in extrapolated.Where(r => Math.Abs(r.F0ErrorHz) > 2 * r.F0IntervalHz))
         {
-            Console.WriteLine($"  far off, seed {far.Seed}: {far.F0ErrorHz:+0.00;-0.00} Hz of {far.F0IntervalHz:0.00} Hz, {far.Model}");
+            Console.WriteLine($"  far off, seed {far.Seed}: {far.F0ErrorHz:+0.00;-0.00} Hz of {far.F0IntervalHz:0.00} Hz, {far.Model}; {far.Still}");
         }
 
         Console.WriteLine($"  Q: held {Share(extrapolated, r => r.QHeld)}");
@@ -32,6 +32,12 @@ public static class CoolDowns
     }
 
     private static string Share(Result[] results, Func<Result, bool> held) => $"{results.Average(r => held(r) ? 1.0 : 0):P1}";
+
+    private static string Describe(World still)
+    {
+        Reading reading = BenchReading.Take(still, 1, o => o with { NearHz = still.Coil.Modes[0].F0Hz }).Reading;
+        return $"a full reading of it standing still errs by {reading.F0Hz - Truth.Loaded(still).F0Hz:+0.00;-0.00} Hz at {reading.F0Hz:0} Hz, Q {reading.Q:0}, feed-through {reading.FeedThrough:P1}";
+    }
 
     private static double Middle(Result[] results, Func<Result, double> value) => results.Select(value).Order().ElementAt(results.Length / 2);
 
@@ -84,6 +90,7 @@ public static class CoolDowns
             DrivenInField = watch.DrivenInField,
             Extrapolated = true,
             Seed = seed,
+            Still = Describe(still),
             Model = string.Join(" + ", end.F0.Model.Terms.Select(term => $"{term.Amplitude:0.0} Hz exp(-t/{term.TauS:0.0} s)")) + $", first after {end.F0.FirstReadingAfterS:0} s, {end.Readings} readings",
             F0Held = Math.Abs(end.F0.AtStop - truth.F0Hz) <= f0,
             QHeld = end.Q is not null && Math.Abs(end.Q.AtStop - truth.Q) <= q,
@@ -98,6 +105,8 @@ public static class CoolDowns
         public int Seed { get; init; }
 
         public string Model { get; init; }
+
+        public string Still { get; init; }
 
         public bool Seen { get; init; }
 

@@ -55,9 +55,17 @@ internal sealed class CoolDownWatch(DateTimeOffset stopUtc, double stopS, double
         return Last;
     }
 
-    /// <summary>Null where the extrapolation says less than that the value was somewhere near the readings.</summary>
+    /// <summary>
+    /// Null where the extrapolation reaches back further than half of what was seen, or says less than that the value was
+    /// somewhere near the readings.
+    /// </summary>
     private CoolDown? Determined(DriftSeries series)
     {
+        if (series.Count == 0 || series.TimeS[0] - stopS > series.DurationS / 2)
+        {
+            return null;
+        }
+
         CoolDown? cool = CoolDown.Extrapolate(series, stopS, stopStandardS);
         double low = double.PositiveInfinity;
         double high = double.NegativeInfinity;

@@ -63,7 +63,7 @@ public sealed class HeldCurve
 
     /// <summary>The curve of a full reading.</summary>
     /// <param name="fit">Its fit.</param>
-    /// <param name="points">The points of the fit, with their variances.</param>
+    /// <param name="points">The points of the fit that the fundamental made, at drive weight 1, with their variances.</param>
     /// <param name="prefactorExponent">As it was declared to the fit.</param>
     /// <returns>Null where there is no fit, or the points do not determine its terms.</returns>
     public static HeldCurve? From(ResonanceFit fit, IReadOnlyList<FitPoint> points, double prefactorExponent)

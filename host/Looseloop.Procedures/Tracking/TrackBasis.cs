@@ -13,7 +13,7 @@ internal sealed class TrackBasis
         Reading reading = outcome.Reading;
         Reading = reading;
         Curve = curve;
-        Duty = reading.Points[0].Setting.Duty;
+        Duty = reading.Points.MinBy(point => Math.Abs(point.Setting.FrequencyHz - curve.F0Hz)).Setting.Duty;
         DarkCounts = reading.Dark.Average(dark => dark.Mean);
         Maker = new AmplitudeMaker(new DetectorScale(options.Law), DarkCounts);
         PeakCounts = reading.Points.Max(point => point.Mean) - DarkCounts;
@@ -38,7 +38,7 @@ internal sealed class TrackBasis
     {
         bool figures = outcome.Fit is { IsFitted: true } && double.IsFinite(outcome.Reading.F0Hz)
             && outcome.Reading.Points.Count > 0 && outcome.Reading.Dark.Count > 0;
-        if (!figures || HeldCurve.From(outcome.Fit!.Value, outcome.Points, options.PrefactorExponent) is not { } curve)
+        if (!figures || HeldCurve.From(outcome.Fit!.Value, UnitDrive.Fundamental(outcome.Points), options.PrefactorExponent) is not { } curve)
         {
             return null;
         }
@@ -52,7 +52,7 @@ internal sealed class TrackBasis
     /// </summary>
     public SetDifference DifferenceBetweenSets(IReadOnlyList<FitPoint> points)
     {
-        FitPoint[] settings = [.. points.GroupBy(point => point.FrequencyHz).Select(Mean).OrderBy(point => point.FrequencyHz)];
+        FitPoint[] settings = [.. UnitDrive.Fundamental(points).GroupBy(point => point.FrequencyHz).Select(Mean).OrderBy(point => point.FrequencyHz)];
         int nearest = 0;
         for (int i = 1; i < settings.Length; i++)
         {

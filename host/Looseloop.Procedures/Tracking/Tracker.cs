@@ -136,7 +136,7 @@ public sealed class Tracker(ReadOptions options)
             return TrackEnd.DarkMoved;
         }
 
-        FitPoint[] points = CurveSweep.FitPoints(sweep.Points, basis.Maker);
+        FitPoint[] points = UnitDrive.Fundamental(CurveSweep.FitPoints(sweep.Points, basis.Maker));
         if (CurveInversion.Invert(basis.Curve, points) is not { } fit)
         {
             return TrackEnd.OtherCurve;

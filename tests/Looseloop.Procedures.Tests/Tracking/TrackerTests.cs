@@ -79,6 +79,29 @@ public class TrackerTests(ITestOutputHelper output)
         Assert.True(ratio < 2, $"a reading strays by {ratio:0.0} intervals");
     }
 
+    // At 156.25 kHz the timer's period goes from 512 counts to 256, and 1/3 comes out as 171/512 on one side and 85/256 on the
+    // other: sines of .8670 and .8640. The truth is the bench's, whose timer counts in its own words.
+    [Theory]
+    [InlineData(155_700)]
+    [InlineData(156_250)]
+    [InlineData(156_700)]
+    public void A_change_of_the_duty_bits_among_the_settings_makes_no_step(double f0Hz)
+    {
+        World world = BenchTracking.World(f0Hz: f0Hz) with { Board = new BoardParameters { MostDutyBits = 13 } };
+        using var link = new VirtualBox(world);
+        using BoxSession box = BoxSession.Open(link, _patience);
+        ReadOptions options = BenchTracking.Options(link.Time, f0Hz);
+        var tracker = new Tracker(options);
+        ReadOutcome full = BenchTracking.Full(box, options);
+        Assert.True(tracker.Begin(full));
+        Reading reading = Assert.Single(tracker.Step(box, CancellationToken.None).Readings);
+        Assert.True(tracker.Settings.Select(setting => setting.DutyBits).Distinct().Count() == 2, "the settings lie on one side");
+        output.WriteLine($"error {reading.F0Hz - Truth.Loaded(world).F0Hz:0.000} Hz of {2 * reading.Budget.F0Hz(false):0.000}, Q {reading.Q / Truth.Loaded(world).Q:0.0000}");
+        Assert.Equal(Truth.Loaded(world).F0Hz, reading.F0Hz, 0.6);
+        Assert.Equal(1, reading.Q / Truth.Loaded(world).Q, 0.004);
+        Assert.Equal(full.Reading.PeakCounts, reading.PeakCounts, 0.01 * full.Reading.PeakCounts);
+    }
+
     [Theory]
     [InlineData(1.03)]
     [InlineData(0.9)]
