@@ -48,7 +48,9 @@ public static class CoolDowns
         double periodS = Math.Pow(10, -2 + (1.5 * random.NextDouble()));
         var warmUp = new WarmUp
         {
-            StartPpm = -300 - (1200 * random.NextDouble()), TimeS = 300 + (900 * random.NextDouble()), StartQPercent = -2 - (4 * random.NextDouble()),
+            StartPpm = -300 - (1200 * random.NextDouble()),
+            TimeS = 300 + (900 * random.NextDouble()),
+            StartQPercent = -2 - (4 * random.NextDouble()),
         };
         var still = new World
         {

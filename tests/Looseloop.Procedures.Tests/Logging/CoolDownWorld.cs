@@ -23,7 +23,9 @@ internal sealed record CoolDownWorld(World World, double StopS)
                     Carriers = [new Carrier { FrequencyHz = 149_300, Volts = 1, PeriodS = periodS, OnS = 0.05 * periodS, FromS = 0, ToS = stopS }],
                     WarmUp = new WarmUp
                     {
-                        StartPpm = -300 - (1200 * random.NextDouble()), TimeS = tauS, StartQPercent = -2 - (4 * random.NextDouble()),
+                        StartPpm = -300 - (1200 * random.NextDouble()),
+                        TimeS = tauS,
+                        StartQPercent = -2 - (4 * random.NextDouble()),
                     },
                 },
             },

@@ -84,7 +84,7 @@ public class TrackerTests(ITestOutputHelper output)
     [Theory]
     [InlineData(155_700)]
     [InlineData(156_250)]
-    [InlineData(156_700)]
+    [InlineData(156_000)]
     public void A_change_of_the_duty_bits_among_the_settings_makes_no_step(double f0Hz)
     {
         World world = BenchTracking.World(f0Hz: f0Hz) with { Board = new BoardParameters { MostDutyBits = 13 } };
