@@ -91,7 +91,8 @@ public class BoardTests
             List<DecayAnswer> lines = decays.Where(decay => decay.Repeat == repeat).ToList();
             long[] times = lines.SelectMany(line => line.SinceStopUs).ToArray();
             Assert.Equal(64, times.Length);
-            Assert.InRange(times[0], 200 + (500 * repeat), 5000 + (500 * repeat));
+            // Never early; how late depends on what else the machine is doing.
+            Assert.InRange(times[0], 200 + (500 * repeat), 300_000);
             Assert.Equal(times.Order(), times);
 
             // This circuit has no memory: after the stop there is only the pedestal.
