@@ -1,6 +1,8 @@
 using System.Text.Json;
 using Looseloop.Bench;
 using Looseloop.Link;
+using Looseloop.Readings;
+using Looseloop.Record;
 
 namespace Looseloop.CommandLine.Tests;
 
@@ -23,6 +25,7 @@ public sealed class PtyReadingTests : IDisposable
         using var box = new VirtualBox(WorldShelf.Load("wren"), seed: 7);
         using var stop = new CancellationTokenSource();
         Task server = Task.Run(() => new BenchServer(box, line).Run(stop.Token));
+        Know(line.SlavePath);
         AppRun onTty = Read("--box", line.SlavePath, "--near", "150k", "--json", "--quiet");
         await stop.CancelAsync();
         await server;
@@ -91,6 +94,14 @@ public sealed class PtyReadingTests : IDisposable
         await chatter;
         Assert.Equal(3, run.ExitCode);
         Assert.Contains("something else is talking", run.Error);
+    }
+
+    /// <summary>Writes down of the box on the tty what the bench declares of the same one: both are then read by one law.</summary>
+    private void Know(string port)
+    {
+        DetectorLaw law = Boxes.BoxChoice.LawOf(WorldShelf.Load("wren")) with { ReadOn = DateTimeOffset.UnixEpoch };
+        using var store = RecordStore.Open(Path.Combine(_folder, "record.db"), DateTimeOffset.UnixEpoch);
+        new RecordFacts(store, "test").Keep(port, law);
     }
 
     /// <summary>A box on a tty is no practice: its readings are kept, here in a record of the test's own.</summary>

@@ -33,6 +33,11 @@ public static class NearLook
             return new Result(new Response(ResponseKind.Carrier, nearHz, 0, 0, double.NaN, double.NaN), look, raw);
         }
 
+        if (raw.Any(point => point.Max > SurveyProcedure.SaturatedShare * box.Identity.FullCounts))
+        {
+            return new Result(TooStrong(box, law, raw, cancel), look, raw);
+        }
+
         var maker = new AmplitudeMaker(new DetectorScale(Pedestal.Settle(law, look)), look.Mean);
         double largestHz = raw.MaxBy(point => point.Mean).Setting.FrequencyHz;
         CloseLook.Finding finding = CloseLook.Run(box, maker, largestHz, cancel);
@@ -45,6 +50,25 @@ public static class NearLook
 
         // Sources stand above it, so a real response here is the lowest; only its strength may say otherwise.
         return new Result(named.Harmonic == 1 ? named with { Kind = ResponseKind.F0 } : named, look, raw);
+    }
+
+    /// <summary>
+    /// At the end of the range the duty tells nothing. But a ghost is weaker than what it comes from: where nothing at an odd
+    /// multiple is as strong, the response is real, and a lower duty will read it.
+    /// </summary>
+    private static Response TooStrong(BoxSession box, DetectorLaw law, IReadOnlyList<RawPoint> raw, CancellationToken cancel)
+    {
+        int top = raw.Max(point => point.Max);
+        double centreHz = raw.Where(point => point.Max > SurveyProcedure.SaturatedShare * box.Identity.FullCounts).Average(point => point.Setting.FrequencyHz);
+        Setting[] multiples =
+        [
+            .. new[] { 3, 5, 7, 9, 11 }.Select(order => order * centreHz).Where(hz => hz < 0.99 * box.Identity.HighestHz)
+                .SelectMany(hz => CurveSweep.About(box.Grid, hz, 3, 1, 0.5)),
+        ];
+        int dwellUs = CurveSweep.DwellUs(new Target(centreHz, 200, 0.5), law);
+        bool ghost = multiples.Length > 0
+            && box.Sweep(new SweepRequest(multiples, dwellUs, 4), cancel: cancel).Points.Any(point => point.Max > 0.9 * top);
+        return new Response(ghost ? ResponseKind.Unknown : ResponseKind.F0, centreHz, top, ghost ? 0 : 1, double.NaN, double.NaN);
     }
 
     /// <summary>Why a response near the given frequency cannot be read as f0.</summary>

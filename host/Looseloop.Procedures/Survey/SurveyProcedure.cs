@@ -10,7 +10,7 @@ public static class SurveyProcedure
     private const int MostResponses = 10;
 
     /// <summary>Above this share of its range a converter, or the detector before it, may be at its end.</summary>
-    private const double SaturatedShare = 0.92;
+    internal const double SaturatedShare = 0.92;
 
     /// <summary>How far from a response its echoes are found, as a share of its frequency.</summary>
     private const double EchoReach = 0.05;
