@@ -108,6 +108,12 @@ public sealed record MeasurePlan(
         }
 
         Setting[] near = [.. Around(box, target, 1, target.Duty).Where(s => Math.Abs(s.FrequencyHz - target.F0Hz) < Doubting * target.BandwidthHz)];
+        if (near.Length < 3)
+        {
+            // So sharp a curve falls between the settings; its nearest ones still tell the drive's strength and the level.
+            near = [.. CurveSweep.About(box.Grid, target.F0Hz, 1, 1, target.Duty).Where(setting => IsInside(box, setting))];
+        }
+
         int stride = (near.Length + MostDoubting - 1) / MostDoubting;
         settings.AddRange(near.Where((setting, i) => i % Math.Max(stride, 1) == 0 && harmonics.TryAdd(setting, 1)));
 
