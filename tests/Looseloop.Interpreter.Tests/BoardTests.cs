@@ -40,7 +40,7 @@ public class BoardTests
         using var client = new WireClient(board);
         client.Ask<PlannedAnswer>("list 9 263 256 9 263 8 9 263 51 9 400 511 8 320 85 7 300 1 13 312 8191 10 500 333");
         Assert.Equal(8, Assert.IsType<DoneAnswer>(client.Ask("sweep 2000 4 0 0 0 0")[^1]).Count);
-        board.WaitForDrive(false, 1);
+        board.WaitForDrive(false, 5);
         var made = board.PinChanges().Where(change => change.On).Select(change => (change.DutyBits, change.Count)).Distinct().ToList();
         foreach ((int bits, int divider, int count) in new[]
         {
@@ -73,7 +73,7 @@ public class BoardTests
         List<long> times = said.OfType<AliveAnswer>().Select(alive => alive.TimeUs).ToList();
         double typicalMs = times.Zip(times.Skip(1), (a, b) => (b - a) / 1000.0).Order().ElementAt(times.Count / 2);
         Assert.InRange(typicalMs, 25, 50);
-        board.WaitForDrive(false, 1);
+        board.WaitForDrive(false, 5);
     }
 
     [InterpreterTheory]
@@ -83,23 +83,28 @@ public class BoardTests
     {
         using InterpretedBoard board = InterpretedBoard.Start(name);
         using var client = new WireClient(board);
-        List<BoxMessage> said = client.Ask("ring 9 263 256 5000 200 500 64 3");
+        const int Repeats = 9;
+        List<BoxMessage> said = client.Ask($"ring 9 263 256 5000 200 500 64 {Repeats}");
         List<DecayAnswer> decays = said.OfType<DecayAnswer>().ToList();
-        Assert.Equal(15, decays.Count);
-        for (int repeat = 0; repeat < 3; repeat++)
+        Assert.Equal(5 * Repeats, decays.Count);
+        var lateUs = new List<long>();
+        for (int repeat = 0; repeat < Repeats; repeat++)
         {
             List<DecayAnswer> lines = decays.Where(decay => decay.Repeat == repeat).ToList();
             long[] times = lines.SelectMany(line => line.SinceStopUs).ToArray();
             Assert.Equal(64, times.Length);
-            // Never early; how late depends on what else the machine is doing.
-            Assert.InRange(times[0], 200 + (500 * repeat), 300_000);
             Assert.Equal(times.Order(), times);
+            lateUs.Add(times[0] - 200 - (500 * repeat));
 
             // This circuit has no memory: after the stop there is only the pedestal.
             Assert.All(lines.SelectMany(line => line.Counts), count => Assert.InRange(count, 370, 430));
         }
 
-        board.WaitForDrive(false, 1);
+        // Never early; a busy machine can hold up single repeats, not most of them.
+        Assert.All(lateUs, late => Assert.True(late >= 0));
+        Assert.InRange(lateUs.Order().ElementAt(Repeats / 2), 0, 5_000);
+
+        board.WaitForDrive(false, 5);
         // The trace of the pin comes by another way than the lines, and later.
         int Starts()
         {
@@ -107,8 +112,8 @@ public class BoardTests
             return pin.Zip(pin.Skip(1)).Count(pair => !pair.First.On && pair.Second.On) + (pin.Count > 0 && pin[0].On ? 1 : 0);
         }
 
-        SpinWait.SpinUntil(() => Starts() == 3, TimeSpan.FromSeconds(10));
-        Assert.Equal(3, Starts());
+        SpinWait.SpinUntil(() => Starts() == Repeats, TimeSpan.FromSeconds(10));
+        Assert.Equal(Repeats, Starts());
     }
 
     [InterpreterTheory(CompilesPlant = true)]
@@ -129,11 +134,8 @@ public class BoardTests
             .Where(pair => pair.Second > 700)
             .Select(pair => (X: (double)pair.First, Y: Math.Log(pair.Second - 400)))
             .ToList();
-        double x = points.Average(point => point.X);
-        double y = points.Average(point => point.Y);
-        double slope = points.Sum(point => (point.X - x) * (point.Y - y)) / points.Sum(point => (point.X - x) * (point.X - x));
         Assert.True(points.Count > 300);
-        Assert.InRange(-1 / slope, RingTimeUs * 0.97, RingTimeUs * 1.03);
+        Assert.InRange(-1 / MedianSlope(points), RingTimeUs * 0.97, RingTimeUs * 1.03);
     }
 
     [InterpreterTheory]
@@ -144,23 +146,7 @@ public class BoardTests
         using InterpretedBoard board = InterpretedBoard.Start(name);
         using var client = new WireClient(board);
         client.Ask<PlannedAnswer>("run 9 500 -1 200 256");
-        int sweep = client.Send("sweep 20000 64 0 0 12 0");
-        board.WaitForDrive(true, 5);
-        int halt = client.Send("halt");
-        board.WaitForDrive(false, 0.5);
-        long offTicks = board.PinChanges()[^1].Ticks;
-        Assert.InRange(Stopwatch.GetElapsedTime(client.SentTicks, offTicks).TotalMilliseconds, 0, 200);
-        var ends = new List<(int, BoxMessage)>();
-        while (ends.Count < 2 && client.Receive(1) is (int request, BoxMessage message))
-        {
-            if (message is DoneAnswer or HaltedAnswer)
-            {
-                ends.Add((request, message));
-            }
-        }
-
-        Assert.Equal([sweep, halt], ends.Select(end => end.Item1));
-        Assert.Equal(Ending.Halted, Assert.IsType<DoneAnswer>(ends[0].Item2).Ending);
+        Assert.InRange(Soonest(200, () => MillisecondsToStop(board, client)), 0, 200);
     }
 
     [InterpreterTheory]
@@ -171,19 +157,7 @@ public class BoardTests
         using InterpretedBoard board = InterpretedBoard.Start(name);
         using var client = new WireClient(board);
         client.Ask<PlannedAnswer>("run 9 500 -1 200 256");
-        int sweep = client.Send("sweep 100000 64 0 0 0 0");
-        board.WaitForDrive(true, 1.9);
-        client.SendRaw(WireClient.Line(sweep, "keep"));
-        board.WaitForDrive(false, 2.5);
-        Assert.InRange(Stopwatch.GetElapsedTime(client.SentTicks, board.PinChanges()[^1].Ticks).TotalSeconds, 1.5, 2.0);
-        var said = new List<BoxMessage>();
-        while (client.Receive(0.5) is (int _, BoxMessage message))
-        {
-            said.Add(message);
-        }
-
-        Assert.Equal(FaultCode.HostSilent, Assert.Single(said.OfType<FaultAnswer>()).Code);
-        Assert.Equal((Ending.Faulted, FaultCode.HostSilent), Assert.IsType<DoneAnswer>(said[^1]) is var done ? (done.Ending, done.FaultCode) : default);
+        Assert.InRange(Soonest(2000, () => MillisecondsOfSilence(board, client)), 1500, 2000);
         client.Ask<HaltedAnswer>("halt"); // and it still answers
     }
 
@@ -205,7 +179,7 @@ public class BoardTests
         client.SendRaw(string.Concat(Enumerable.Repeat(WireClient.Line(sweep, "keep"), 40))); // 700 bytes at once
         var said = new List<BoxMessage>();
         var waited = Stopwatch.StartNew();
-        while (waited.Elapsed.TotalSeconds < 10 && client.Receive(1) is (int _, BoxMessage message))
+        while (waited.Elapsed.TotalSeconds < 30 && client.Receive(5) is (int _, BoxMessage message))
         {
             said.Add(message);
             if (Stopwatch.GetElapsedTime(client.SentTicks).TotalSeconds > 0.5)
@@ -223,7 +197,7 @@ public class BoardTests
         Assert.Equal((40, Ending.Complete), (done.Count, done.Ending));
         Assert.Contains(said, message => message is FaultAnswer { Code: FaultCode.UnreadableLine or FaultCode.LineTooLong });
         Assert.All(said.OfType<FaultAnswer>(), fault => Assert.True(fault.Code is FaultCode.UnreadableLine or FaultCode.LineTooLong));
-        board.WaitForDrive(false, 0.5);
+        board.WaitForDrive(false, 5);
         client.Ask<BoxAnswer>("identify");
     }
 
@@ -244,5 +218,78 @@ public class BoardTests
         second.Send("sweep 1000 16 0 0 0 0");
         Assert.True(second.Receive(5) is (_, FaultAnswer { Code: FaultCode.PlanEmpty }));
         Assert.False(again.IsDriving);
+    }
+
+    private static double MillisecondsToStop(InterpretedBoard board, WireClient client)
+    {
+        int sweep = client.Send("sweep 20000 64 0 0 12 0");
+        board.WaitForDrive(true, 10);
+        int halt = client.Send("halt");
+        board.WaitForDrive(false, 2); // the sweep itself would take 4 s
+        double stopMs = Stopwatch.GetElapsedTime(client.SentTicks, board.PinChanges()[^1].Ticks).TotalMilliseconds;
+        var ends = new List<(int, BoxMessage)>();
+        while (ends.Count < 2 && client.Receive(5) is (int request, BoxMessage message))
+        {
+            if (message is DoneAnswer or HaltedAnswer)
+            {
+                ends.Add((request, message));
+            }
+        }
+
+        Assert.Equal([sweep, halt], ends.Select(end => end.Item1));
+        Assert.Equal(Ending.Halted, Assert.IsType<DoneAnswer>(ends[0].Item2).Ending);
+        return stopMs;
+    }
+
+    private static double MillisecondsOfSilence(InterpretedBoard board, WireClient client)
+    {
+        int sweep = client.Send("sweep 100000 64 0 0 0 0");
+        board.WaitForDrive(true, 1.9);
+        client.SendRaw(WireClient.Line(sweep, "keep"));
+        board.WaitForDrive(false, 5); // the sweep itself would take 20 s
+        double silentMs = Stopwatch.GetElapsedTime(client.SentTicks, board.PinChanges()[^1].Ticks).TotalMilliseconds;
+        Assert.True(silentMs > 1500);
+        var said = new List<BoxMessage>();
+        while (said.LastOrDefault() is not DoneAnswer && client.Receive(5) is (int _, BoxMessage message))
+        {
+            said.Add(message);
+        }
+
+        Assert.Equal(FaultCode.HostSilent, Assert.Single(said.OfType<FaultAnswer>()).Code);
+        DoneAnswer done = Assert.IsType<DoneAnswer>(said[^1]);
+        Assert.Equal((Ending.Faulted, FaultCode.HostSilent), (done.Ending, done.FaultCode));
+        return silentMs;
+    }
+
+    // A busy machine makes what it measures later, never sooner: up to three tries, the soonest counts.
+    private static double Soonest(double limitMs, Func<double> tryOnce)
+    {
+        double soonest = double.MaxValue;
+        for (int i = 0; i < 3 && soonest > limitMs; i++)
+        {
+            soonest = Math.Min(soonest, tryOnce());
+        }
+
+        return soonest;
+    }
+
+    // Theil and Sen's slope, the median over all pairs: a repeat that a busy machine held up between the clock and the pin
+    // is an outlier, and least squares would follow it.
+    private static double MedianSlope(List<(double X, double Y)> points)
+    {
+        var slopes = new List<double>();
+        for (int i = 0; i < points.Count; i++)
+        {
+            for (int k = 0; k < i; k++)
+            {
+                if (Math.Abs(points[i].X - points[k].X) > 100)
+                {
+                    slopes.Add((points[i].Y - points[k].Y) / (points[i].X - points[k].X));
+                }
+            }
+        }
+
+        slopes.Sort();
+        return slopes[slopes.Count / 2];
     }
 }
