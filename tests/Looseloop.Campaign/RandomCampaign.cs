@@ -33,7 +33,8 @@ public static class RandomCampaign
         Result[] sound = [.. done.Where(r => r.Verdict == Verdict.Sound)];
         Console.WriteLine($"sound readings, 95 % repeatability interval holds f0 {Share(sound, r => r.F0Repeat, 1.96):P1}, Q {Share(sound, r => r.QRepeat, 1.96):P1}");
         Console.WriteLine($"sound readings, 95 % absolute interval holds f0 {Share(sound, r => r.F0Z, 2):P1}, Q {Share(sound, r => r.QZ, 2):P1}");
-        Console.WriteLine($"board time: middle {done.Select(r => r.BoardSeconds).Order().ElementAt(done.Length / 2):0.0} s, largest {done.Max(r => r.BoardSeconds):0.0} s");
+        BoardTime("all", done);
+        BoardTime("f0 from 100 kHz, Q to 400, sound", [.. sound.Where(r => Truth.Unloaded(r.World) is { F0Hz: >= 100e3, Q: <= 400 })]);
         if (verbose)
         {
             foreach (Result r in sound.Where(IsWrong).Take(40))
@@ -50,6 +51,17 @@ public static class RandomCampaign
         }
 
         return 0;
+    }
+
+    private static void BoardTime(string name, Result[] results)
+    {
+        double[] seconds = [.. results.Select(r => r.BoardSeconds).Order()];
+        if (seconds.Length > 0)
+        {
+            Console.WriteLine(
+                $"board time ({name}, {seconds.Length}): middle {seconds[seconds.Length / 2]:0.0} s, 95 % {seconds[seconds.Length * 95 / 100]:0.0} s, "
+                + $"largest {seconds[^1]:0.0} s; over 12 s: {seconds.Count(s => s > 12)}");
+        }
     }
 
     private static bool IsWrong(Result r) => Math.Abs(r.F0Z) > 3 || Math.Abs(r.QZ) > 3;
