@@ -7,7 +7,7 @@ return args switch
     ["random", string worlds, .. string[] rest] => RandomCampaign.Run(
         int.Parse(worlds, System.Globalization.CultureInfo.InvariantCulture),
         rest.Length > 0 ? ulong.Parse(rest[0], System.Globalization.CultureInfo.InvariantCulture) : 1,
-        rest.Length > 1 && rest[1] != "-" ? Enum.Parse<Defect>(rest[1]) : null,
+        rest.Length > 1 && !rest[1].StartsWith('-') ? Enum.Parse<Defect>(rest[1]) : null,
         rest.Contains("-v")),
     ["one", string seed, .. string[] rest] => OneWorld.Run(
         ulong.Parse(seed, System.Globalization.CultureInfo.InvariantCulture), rest.Length > 0 ? Enum.Parse<Defect>(rest[0]) : null),
