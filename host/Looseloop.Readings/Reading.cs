@@ -64,4 +64,10 @@ public sealed record Reading
 
     /// <summary>The dark levels taken before, between and after.</summary>
     public required IReadOnlyList<DarkLevel> Dark { get; init; }
+
+    /// <summary>
+    /// What the fit was made with; null where there was none, and for a tracked reading, whose fit rests on the full reading
+    /// before it. Readings kept before version 3 of the record's form have none.
+    /// </summary>
+    public FitBasis? Basis { get; init; }
 }

@@ -9,7 +9,9 @@ namespace Looseloop.Record;
 /// <summary>The facts as JSON objects with units in their names; a figure that is not known is null.</summary>
 internal static class FactJson
 {
-    public static string Of(DetectorLaw law) => Object(json =>
+    public static string Of(DetectorLaw law) => Object(json => Write(json, law));
+
+    public static void Write(Utf8JsonWriter json, DetectorLaw law)
     {
         json.WriteString("kind", law.Kind.ToString());
         ReadingJson.Number(json, "pedestal_counts", law.PedestalCounts);
@@ -22,43 +24,56 @@ internal static class FactJson
         ReadingJson.Number(json, "high_extra_s", law.HighExtraS);
         ReadingJson.Number(json, "u_high_extra_s", law.HighExtraUncertaintyS);
         On(json, law.ReadOn);
-    });
+    }
 
-    public static DetectorLaw ToLaw(string text) => Read(text, json => new DetectorLaw(
+    public static DetectorLaw ToLaw(string text) => Read(text, ToLaw);
+
+    public static DetectorLaw ToLaw(JsonElement json) => new(
         Enum.Parse<DetectorKind>(json.GetProperty("kind").GetString()!), Figure(json, "pedestal_counts"), Figure(json, "u_pedestal_counts"),
         Figure(json, "shape"), Figure(json, "u_shape"), Figure(json, "reference_counts"), Figure(json, "time_constant_s"), On(json))
     {
         BowBound = Figure(json, "bow_bound"),
         HighExtraS = Figure(json, "high_extra_s"),
         HighExtraUncertaintyS = Figure(json, "u_high_extra_s"),
-    });
+    };
 
-    public static string Of(ClockTrim trim) => Object(json =>
+    public static string Of(ClockTrim trim) => Object(json => Write(json, trim));
+
+    public static void Write(Utf8JsonWriter json, ClockTrim trim)
     {
         ReadingJson.Number(json, "ppm", trim.Ppm);
         ReadingJson.Number(json, "u_ppm", trim.UncertaintyPpm);
         On(json, trim.On);
-    });
+    }
 
-    public static ClockTrim ToClock(string text) => Read(text, json => new ClockTrim(Figure(json, "ppm"), Figure(json, "u_ppm"), On(json)!.Value));
+    public static ClockTrim ToClock(string text) => Read(text, ToClock);
+
+    public static ClockTrim ToClock(JsonElement json) => new(Figure(json, "ppm"), Figure(json, "u_ppm"), On(json)!.Value);
 
     public static string Of(Pull pull, IReadOnlyDictionary<string, string> setUp) => Object(json =>
     {
         json.WriteString("set_up", TextMap.ToJson(setUp));
+        Write(json, pull);
+    });
+
+    public static void Write(Utf8JsonWriter json, Pull pull)
+    {
         ReadingJson.Number(json, "f0_relative", pull.F0Relative);
         ReadingJson.Number(json, "u_f0_relative", pull.F0Uncertainty);
         ReadingJson.Number(json, "loss_added", pull.LossAdded);
         ReadingJson.Number(json, "u_loss_added", pull.LossUncertainty);
         On(json, pull.On);
-    });
+    }
 
-    public static Pull ToPull(string text) => Read(text, json => new Pull(
-        Figure(json, "f0_relative"), Figure(json, "u_f0_relative"), Figure(json, "loss_added"), Figure(json, "u_loss_added"), On(json)!.Value));
+    public static Pull ToPull(string text) => Read(text, ToPull);
+
+    public static Pull ToPull(JsonElement json) => new(
+        Figure(json, "f0_relative"), Figure(json, "u_f0_relative"), Figure(json, "loss_added"), Figure(json, "u_loss_added"), On(json)!.Value);
 
     /// <summary>The set-up that a pull belongs to, as its JSON text.</summary>
     public static string SetUpOf(string pull) => Read(pull, json => json.GetProperty("set_up").GetString()!);
 
-    private static double Figure(JsonElement json, string name) =>
+    public static double Figure(JsonElement json, string name) =>
         json.TryGetProperty(name, out JsonElement value) && value.ValueKind == JsonValueKind.Number ? value.GetDouble() : double.NaN;
 
     private static void On(Utf8JsonWriter json, DateTimeOffset? time) =>
@@ -67,7 +82,7 @@ internal static class FactJson
     private static DateTimeOffset? On(JsonElement json) =>
         json.GetProperty("on").GetString() is { } text ? DateTimeOffset.Parse(text, CultureInfo.InvariantCulture) : null;
 
-    private static string Object(Action<Utf8JsonWriter> body)
+    public static string Object(Action<Utf8JsonWriter> body)
     {
         ArrayBufferWriter<byte> buffer = new();
         using (Utf8JsonWriter json = new(buffer))
@@ -80,7 +95,7 @@ internal static class FactJson
         return Encoding.UTF8.GetString(buffer.WrittenSpan);
     }
 
-    private static T Read<T>(string text, Func<JsonElement, T> map)
+    public static T Read<T>(string text, Func<JsonElement, T> map)
     {
         using JsonDocument document = JsonDocument.Parse(text);
         return map(document.RootElement);

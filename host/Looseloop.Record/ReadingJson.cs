@@ -35,8 +35,16 @@ internal static class ReadingJson
         Number(json, "temperature_c", reading.TemperatureC);
         Reasons(json, reading);
         Lines(json, reading.Budget);
-        Points(json, reading.Points);
+        Points(json, "points", reading.Points);
         Dark(json, reading.Dark);
+        if (reading.Basis is { } basis)
+        {
+            json.WriteStartObject("fit_basis");
+            BasisJson.Write(json, basis);
+            Points(json, "at_other_duty", basis.AtOtherDuty);
+            Points(json, "after_longer_dwell", basis.AfterLongerDwell);
+            json.WriteEndObject();
+        }
     }
 
     public static void Number(Utf8JsonWriter json, string name, double value)
@@ -111,9 +119,9 @@ internal static class ReadingJson
         json.WriteEndArray();
     }
 
-    private static void Points(Utf8JsonWriter json, IReadOnlyList<RawPoint> points)
+    private static void Points(Utf8JsonWriter json, string name, IReadOnlyList<RawPoint> points)
     {
-        json.WriteStartArray("points");
+        json.WriteStartArray(name);
         foreach (RawPoint point in points)
         {
             json.WriteStartObject();

@@ -6,6 +6,9 @@ namespace Looseloop.Record;
 /// <summary>Loads whole readings.</summary>
 internal static class ReadingLoader
 {
+    /// <summary>The columns of a raw point.</summary>
+    public const string PointColumns = "duty_bits, divider, duty_count, frequency_hz, samples, sum, sum_squares, min, max, board_time_us";
+
     private const string Query =
         "SELECT r.id, r.utc_us, r.monotonic_s, r.f0_hz, r.q, r.temperature_c, r.peak_counts, r.feed_through, r.ring_q, r.ring_q_relative, "
         + "r.board_time_us, r.board_s, r.host_version, r.coil, r.note, r.verdict, coalesce(r.refit_of, r.number), s.json, "
@@ -47,6 +50,7 @@ internal static class ReadingLoader
             Reasons = Reasons(connection, number),
             Points = Points(connection, pointsOf),
             Dark = Dark(connection, pointsOf),
+            Basis = BasisLoader.Load(connection, number, pointsOf),
         };
     }
 
@@ -72,13 +76,13 @@ internal static class ReadingLoader
             row.GetString(1)),
         number);
 
+    /// <summary>A point from <see cref="PointColumns"/>.</summary>
+    public static RawPoint Point(SqliteDataReader row) => new(
+        new Setting(row.GetInt32(0), row.GetInt32(1), row.GetInt32(2), row.GetDouble(3)), row.GetInt32(4), row.GetInt64(5), row.Long(6),
+        row.GetInt32(7), row.GetInt32(8), row.GetInt64(9));
+
     private static List<RawPoint> Points(SqliteConnection connection, long number) => connection.All(
-        "SELECT duty_bits, divider, duty_count, frequency_hz, samples, sum, sum_squares, min, max, board_time_us FROM point "
-        + "WHERE reading = @0 ORDER BY place",
-        row => new RawPoint(
-            new Setting(row.GetInt32(0), row.GetInt32(1), row.GetInt32(2), row.GetDouble(3)), row.GetInt32(4), row.GetInt64(5), row.Long(6),
-            row.GetInt32(7), row.GetInt32(8), row.GetInt64(9)),
-        number);
+        $"SELECT {PointColumns} FROM point WHERE reading = @0 ORDER BY place", Point, number);
 
     private static List<DarkLevel> Dark(SqliteConnection connection, long number) => connection.All(
         "SELECT channel, samples, sum, sum_squares, min, max, from_us, to_us FROM dark WHERE reading = @0 ORDER BY place",

@@ -14,6 +14,7 @@ internal sealed class ReadingWriter : IDisposable
     private readonly PreparedInsert _reason;
     private readonly PreparedInsert _point;
     private readonly PreparedInsert _dark;
+    private readonly BasisWriter _basis;
     private readonly Dictionary<BoxIdentity, long> _boxes = [];
     private readonly Dictionary<string, long> _setUps = [];
 
@@ -31,6 +32,7 @@ internal sealed class ReadingWriter : IDisposable
             connection, "point",
             "reading, place, duty_bits, divider, duty_count, frequency_hz, samples, sum, sum_squares, min, max, board_time_us");
         _dark = new(connection, "dark", "reading, place, channel, samples, sum, sum_squares, min, max, from_us, to_us");
+        _basis = new(connection);
     }
 
     /// <summary>Writes a reading; false where one of its id is there already.</summary>
@@ -66,6 +68,7 @@ internal sealed class ReadingWriter : IDisposable
             _reason.Run(transaction, own, (long)i, reading.Reasons[i].Code.ToString(), reading.Reasons[i].Detail);
         }
 
+        _basis.Write(transaction, own, reading.Basis, withPoints: refitOf is null);
         if (refitOf is null)
         {
             WritePoints(transaction, own, reading);
@@ -107,6 +110,7 @@ internal sealed class ReadingWriter : IDisposable
         _reason.Dispose();
         _point.Dispose();
         _dark.Dispose();
+        _basis.Dispose();
     }
 
     // A reading without Q has a budget of nothing: zero keeps the column without a NaN.

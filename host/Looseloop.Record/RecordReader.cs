@@ -78,6 +78,16 @@ public sealed class RecordReader : IDisposable
     /// <summary>How many readings the record holds.</summary>
     public long CountReadings() => Guard(() => (long)_connection.Command("SELECT count(*) FROM reading").ExecuteScalar()!);
 
+    /// <summary>
+    /// The number of the full reading that a tracked one rests on: the last one in its run before it that has figures and what
+    /// they were made with; null where there is none.
+    /// </summary>
+    public long? FullReadingBefore(long number) => Guard(() => First(
+        // Backwards through the full readings, which are few: a CROSS JOIN keeps that order (sqlite.org/optoverview.html).
+        "SELECT b.reading FROM fit_basis b CROSS JOIN reading r ON r.number = b.reading WHERE b.reading < @0 "
+        + "AND r.run = (SELECT run FROM reading WHERE number = @0) AND r.refit_of IS NULL AND r.f0_hz IS NOT NULL ORDER BY b.reading DESC LIMIT 1",
+        number));
+
     /// <summary>The refits of a reading, the oldest first.</summary>
     public IReadOnlyList<ReadingSummary> Refits(long number) => Guard(() => _connection.All(
         $"SELECT {SummaryColumns} FROM reading WHERE refit_of = @0 ORDER BY number", Summary, number));

@@ -17,7 +17,7 @@ public sealed class ImportTests : IDisposable
         store.Append(start);
         for (int n = from; n < from + count; n++)
         {
-            store.Append(start.Id, SampleReadings.At(n, coil, $"note {n}"));
+            store.Append(start.Id, SampleReadings.At(n, coil, $"note {n}") with { Basis = n == 1 ? RoundTripTests.SomeBasis() : null });
         }
 
         store.Append(new RunEvent

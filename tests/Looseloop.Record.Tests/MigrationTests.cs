@@ -34,6 +34,27 @@ public sealed class MigrationTests : IDisposable
     }
 
     [Fact]
+    public void Readings_of_the_second_version_are_brought_up_to_date_without_a_basis_that_nobody_knows()
+    {
+        string path = _folder.File("second.db");
+        Reading reading = SampleReadings.At(1);
+        using (RecordStore store = RecordStore.Open(path, _now))
+        {
+            RunStart start = SampleReadings.Start();
+            store.Append(start);
+            store.Append(start.Id, reading);
+            store.Append(new RunStop(start.Id, _now, RunStatus.Completed, "done", 1));
+
+            // As it stood before the third script.
+            store.Connection.Command("DROP TABLE fit_basis; DROP TABLE check_point; PRAGMA user_version = 2").ExecuteNonQuery();
+        }
+
+        using RecordStore opened = RecordStore.Open(path, _now);
+        RoundTripTests.Same(reading, opened.Reader.Reading(1));
+        Assert.Null(opened.Reader.Reading(1).Basis);
+    }
+
+    [Fact]
     public void The_file_is_durable_and_strict_as_stated()
     {
         using RecordStore store = RecordStore.Open(_folder.File("a.db"), _now);

@@ -18,6 +18,7 @@ public sealed class RoundTripTests : IDisposable
         Assert.Equal(expected.Dark, actual.Dark);
         Assert.Equal(expected.Budget.Lines, actual.Budget.Lines);
         Assert.Equal(expected.Reasons, actual.Reasons);
+        SameBasis(expected.Basis, actual.Basis);
         Assert.Equal(expected.SetUp.OrderBy(p => p.Key), actual.SetUp.OrderBy(p => p.Key));
 
         // All else by the record's own equality, with the lists taken out of it.
@@ -30,10 +31,62 @@ public sealed class RoundTripTests : IDisposable
             Reasons = [],
             Budget = new Budget([]),
             SetUp = _empty,
+            Basis = null,
         } with
         { Points = _noPoints, Dark = _noDark, Reasons = _noReasons, Budget = _noBudget };
     }
 
+    private static void SameBasis(FitBasis? expected, FitBasis? actual)
+    {
+        Assert.Equal(expected is null, actual is null);
+        if (expected is null || actual is null)
+        {
+            return;
+        }
+
+        Assert.Equal(expected.AtOtherDuty, actual.AtOtherDuty);
+        Assert.Equal(expected.AfterLongerDwell, actual.AfterLongerDwell);
+        Assert.Equal(expected.Harmonics, actual.Harmonics);
+        Assert.Equal(expected.NeighboursHz, actual.NeighboursHz);
+        Assert.Equal(expected.OvertonesHz, actual.OvertonesHz);
+        Assert.Equal(Bare(expected), Bare(actual));
+
+        static FitBasis Bare(FitBasis basis) => basis with
+        {
+            AtOtherDuty = _noPoints,
+            AfterLongerDwell = _noPoints,
+            Harmonics = _noHarmonics,
+            NeighboursHz = _noHertz,
+            OvertonesHz = _noHertz,
+        };
+    }
+
+    /// <summary>A basis in which no figure is round.</summary>
+    internal static FitBasis SomeBasis() => new()
+    {
+        Law = new DetectorLaw(DetectorKind.DiodeKnee, 310.1, 0.7, 123.4, 3.3, 1999.9, 51e-6, _now) { BowBound = 0.0021, HighExtraS = 3e-9, HighExtraUncertaintyS = 1e-9 },
+        PrefactorExponent = -1,
+        Clock = new ClockTrim(-11.3, 0.4, _now),
+        Pull = new Pull(0.00031, 0.00002, 1e-5, 1e-6, _now.AddDays(-1)),
+        Commissioned = true,
+        PlannedF0Hz = 150000.1 / 3,
+        PlannedQ = 211.7,
+        PlannedDuty = 1 / 3.0,
+        DwellUs = 3141,
+        Samples = 100,
+        SpacingUs = 200,
+        Harmonics = [1, 1, 3, 5],
+        OtherDuty = 0.5,
+        AtOtherDuty = SampleReadings.At(3).Points,
+        AfterLongerDwell = [SampleReadings.At(4).Points[0] with { SumSquares = null }],
+        Missing = 2,
+        Saturated = true,
+        NeighboursHz = [151000.7],
+        OvertonesHz = [450300.2, 612000.9],
+    };
+
+    private static readonly int[] _noHarmonics = [];
+    private static readonly double[] _noHertz = [];
     private static readonly Dictionary<string, string> _empty = [];
     private static readonly RawPoint[] _noPoints = [];
     private static readonly DarkLevel[] _noDark = [];
@@ -55,6 +108,43 @@ public sealed class RoundTripTests : IDisposable
 
         using RecordReader reader = RecordReader.Open(path);
         Same(reading, reader.Reading(1));
+    }
+
+    [Fact]
+    public void What_a_fit_was_made_with_comes_back_whole_and_a_refit_has_its_own()
+    {
+        Reading reading = SampleReadings.At(7) with { Basis = SomeBasis() };
+        RunStart start = SampleReadings.Start();
+        using RecordStore store = RecordStore.Open(_folder.File("a.db"), _now);
+        store.Append(start);
+        store.Append(start.Id, SampleReadings.At(6));
+        store.Append(start.Id, reading);
+        Reading refit = reading with
+        {
+            Id = Guid.CreateVersion7(),
+            Basis = SomeBasis() with { Law = DetectorLaw.Declared(DetectorKind.RmsLinear, 300), Clock = null, Pull = null },
+        };
+        store.AppendRefit(start.Id, refit, 2);
+        Assert.Null(store.Reader.Reading(1).Basis);
+        Same(reading, store.Reader.Reading(2));
+        Same(refit, store.Reader.Reading(3));
+    }
+
+    [Fact]
+    public void The_full_reading_that_a_tracked_one_rests_on_is_found_in_its_own_run()
+    {
+        using RecordStore store = RecordStore.Open(_folder.File("a.db"), _now);
+        RunStart other = SampleReadings.Start();
+        RunStart start = SampleReadings.Start();
+        store.Append(other);
+        store.Append(start);
+        store.Append(start.Id, SampleReadings.At(1));
+        store.Append(start.Id, SampleReadings.At(2) with { Basis = SomeBasis() });
+        store.Append(other.Id, SampleReadings.At(3) with { Basis = SomeBasis() });
+        store.Append(start.Id, SampleReadings.At(4) with { Basis = SomeBasis(), F0Hz = double.NaN });
+        store.Append(start.Id, SampleReadings.At(5));
+        Assert.Equal(2, store.Reader.FullReadingBefore(5));
+        Assert.Null(store.Reader.FullReadingBefore(2));
     }
 
     [Fact]

@@ -44,6 +44,9 @@ public sealed record Measurement
     /// <summary>The other duty.</summary>
     public required double OtherDuty { get; init; }
 
+    /// <summary>The points at it.</summary>
+    public required IReadOnlyList<RawPoint> AtOtherDuty { get; init; }
+
     /// <summary>The drive's true strength at the reading's duty, where vernier settings made it matter.</summary>
     public required EdgeWeight Edges { get; init; }
 

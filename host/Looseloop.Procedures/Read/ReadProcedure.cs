@@ -2,7 +2,6 @@ using Looseloop.Box;
 using Looseloop.Procedures.Checks;
 using Looseloop.Procedures.Detector;
 using Looseloop.Procedures.Survey;
-using Looseloop.Procedures.Uncertainty;
 using Looseloop.Readings;
 using Looseloop.Resonance;
 
@@ -62,7 +61,9 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         }
 
         Measurement measurement = Measure(search, survey);
-        return Judge(measurement);
+        Reading document = Document(
+            measurement.Points, [measurement.DarkBefore, measurement.DarkAfter], Verdict.None, [], new Budget([]));
+        return ReadingJudge.Judge(document, measurement);
     }
 
     private Measurement Measure(TargetSearch.Result search, SurveyResult? survey)
@@ -84,27 +85,50 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         Setting[] flanks = Flanks(plan, target);
         SweepResult longer = box.Sweep(
             new SweepRequest(flanks, 2 * plan.DwellUs, plan.Samples) { SpacingUs = plan.SpacingUs }, cancel: cancel);
-        DarkLevel after = QuietDark(target);
-
-        var maker = new AmplitudeMaker(new DetectorScale(_options.Law), (before.Mean + after.Mean) / 2);
-        EdgeWeight edges = plan.UsesVernier ? Edges(sweep.Points, other.Points, plan, maker) : EdgeWeight.None;
-        FitPoint[] points =
-        [
-            .. CurveSweep.FitPoints(sweep.Points, maker, plan.Harmonics)
-                .Select(point => point.Group == 0 ? point with { DriveWeight = point.DriveWeight * edges.Factor } : point),
-        ];
-        var declared = new FitOptions { PrefactorExponent = _options.PrefactorExponent, F0GuessHz = target.F0Hz, QGuess = target.Q };
-        var fitter = new ResonanceFitter(Math.Max(points.Length, 16));
-        ResonanceFit fit = fitter.Fit(points, declared);
-        double[] residuals = fitter.NormalizedResiduals.ToArray();
-        int half = points.Length / 2;
-        return new Measurement
+        return Fit(new SweepsTaken
         {
             Options = _options,
             Box = box.Identity,
             Target = target,
             Plan = plan,
             Survey = survey,
+            Sweep = sweep,
+            OtherDuty = otherDuty,
+            AtOtherDuty = other,
+            AfterLongerDwell = longer,
+            DarkBefore = before,
+            DarkAfter = QuietDark(target),
+            Saturated = search.Saturated,
+        });
+    }
+
+    /// <summary>Fits what was taken. Talks to no box: recorded sweeps come out the same again.</summary>
+    internal static Measurement Fit(SweepsTaken taken)
+    {
+        ReadOptions options = taken.Options;
+        Target target = taken.Target;
+        MeasurePlan plan = taken.Plan;
+        (SweepResult sweep, SweepResult other, SweepResult longer) = (taken.Sweep, taken.AtOtherDuty, taken.AfterLongerDwell);
+        (DarkLevel before, DarkLevel after) = (taken.DarkBefore, taken.DarkAfter);
+        var maker = new AmplitudeMaker(new DetectorScale(options.Law), (before.Mean + after.Mean) / 2);
+        EdgeWeight edges = plan.UsesVernier ? Edges(sweep.Points, other.Points, plan, maker) : EdgeWeight.None;
+        FitPoint[] points =
+        [
+            .. CurveSweep.FitPoints(sweep.Points, maker, plan.Harmonics)
+                .Select(point => point.Group == 0 ? point with { DriveWeight = point.DriveWeight * edges.Factor } : point),
+        ];
+        var declared = new FitOptions { PrefactorExponent = options.PrefactorExponent, F0GuessHz = target.F0Hz, QGuess = target.Q };
+        var fitter = new ResonanceFitter(Math.Max(points.Length, 16));
+        ResonanceFit fit = fitter.Fit(points, declared);
+        double[] residuals = fitter.NormalizedResiduals.ToArray();
+        int half = points.Length / 2;
+        return new Measurement
+        {
+            Options = options,
+            Box = taken.Box,
+            Target = target,
+            Plan = plan,
+            Survey = taken.Survey,
             Points = sweep.Points,
             Maker = maker,
             FitPoints = points,
@@ -113,13 +137,14 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             There = fitter.Fit(points.AsSpan(0, half), declared),
             Back = fitter.Fit(points.AsSpan(half), declared),
             OtherDutyFit = fitter.Fit(CurveSweep.FitPoints(other.Points, maker), declared),
-            OtherDuty = otherDuty,
+            OtherDuty = taken.OtherDuty,
+            AtOtherDuty = other.Points,
             Edges = edges,
             DwellPairs = Pair(sweep.Points, longer.Points, maker),
             DarkBefore = before,
             DarkAfter = after,
             Missing = sweep.Missing + other.Missing + longer.Missing,
-            Saturated = search.Saturated,
+            Saturated = taken.Saturated,
         };
     }
 
@@ -157,30 +182,6 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         // Upward points come first: those are the ones whose dwell followed a lower setting, as the longer ones do.
         var first = points.GroupBy(point => point.Setting).ToDictionary(group => group.Key, group => group.First());
         return [.. longer.Where(point => first.ContainsKey(point.Setting)).Select(point => (maker.Make(first[point.Setting]), maker.Make(point)))];
-    }
-
-    private ReadOutcome Judge(Measurement measurement)
-    {
-        List<Reason> reasons = ReadingChecks.All(measurement);
-        bool figures = measurement.Fit.IsFitted && reasons.All(reason => reason.AtBest != Verdict.None);
-        Budget budget = figures ? BudgetMaker.Make(measurement) : new Budget([]);
-        if (figures)
-        {
-            reasons.AddRange(BudgetReasons.Of(measurement, budget));
-        }
-
-        Verdict verdict = reasons.Select(reason => reason.AtBest).Append(figures ? Verdict.Sound : Verdict.None).Min();
-        ResonanceFit fit = measurement.Fit;
-        double clock = 1 + ((_options.Clock?.Ppm ?? 0) * 1e-6);
-        double pull = _options.Pull?.F0Relative ?? 0;
-        Reading reading = Document(measurement.Points, [measurement.DarkBefore, measurement.DarkAfter], verdict, reasons, budget) with
-        {
-            F0Hz = figures ? fit.F0Hz * clock * (1 - pull) : double.NaN,
-            Q = figures ? 1 / ((1 / fit.Q) - (_options.Pull?.LossAdded ?? 0)) : double.NaN,
-            PeakCounts = figures ? fit.PeakAmplitude : double.NaN,
-            FeedThrough = figures ? fit.FeedThrough.Ratio : double.NaN,
-        };
-        return new ReadOutcome(reading, fit, measurement.FitPoints, measurement.Survey);
     }
 
     private ReadOutcome Nothing(SurveyResult? survey, DarkLevel look, IReadOnlyList<Reason> reasons, IReadOnlyList<RawPoint> points) =>

@@ -8,6 +8,9 @@ namespace Looseloop.Procedures.Tracking;
 /// <summary>What tracked readings take over from the full reading before them.</summary>
 internal sealed class TrackBasis
 {
+    /// <summary>A residual this small, of the peak, moves f0 and Q by less than the interval allows.</summary>
+    private const double HarmlessResidual = 0.004;
+
     private TrackBasis(ReadOutcome outcome, HeldCurve curve, ReadOptions options)
     {
         Reading reading = outcome.Reading;
@@ -15,7 +18,7 @@ internal sealed class TrackBasis
         Curve = curve;
         Duty = reading.Points.MinBy(point => Math.Abs(point.Setting.FrequencyHz - curve.F0Hz)).Setting.Duty;
         DarkCounts = reading.Dark.Average(dark => dark.Mean);
-        Maker = new AmplitudeMaker(new DetectorScale(options.Law), DarkCounts);
+        Maker = new AmplitudeMaker(new DetectorScale(reading.Basis?.Law ?? options.Law), DarkCounts);
         PeakCounts = reading.Points.Max(point => point.Mean) - DarkCounts;
     }
 
@@ -74,6 +77,21 @@ internal sealed class TrackBasis
         return found.Count < 2
             ? default
             : new SetDifference(found.Max(fit => fit.F0Hz) - found.Min(fit => fit.F0Hz), (found.Max(fit => fit.Q) / found.Min(fit => fit.Q)) - 1);
+    }
+
+    /// <summary>Whether a fit of a few settings still belongs to this curve.</summary>
+    /// <param name="fit">The fit.</param>
+    /// <param name="points">Its points, at drive weight 1.</param>
+    public TrackEnd Judge(TrackedFit fit, FitPoint[] points)
+    {
+        double amplitude = fit.Scale * fit.Q / Curve.Q;
+        if (amplitude is < 0.7 or > 1.4 || fit.Q / Curve.Q is < 0.8 or > 1.25)
+        {
+            return TrackEnd.FarFromCurve;
+        }
+
+        double noise = Math.Sqrt(points.Average(point => point.Variance)) / (amplitude * Math.Sqrt(Curve.PeakPower));
+        return fit.ResidualRatio > Math.Max(HarmlessResidual, 5 * noise) ? TrackEnd.OtherCurve : TrackEnd.None;
     }
 
     private static FitPoint Mean(IEnumerable<FitPoint> same)

@@ -1,4 +1,3 @@
-using Looseloop.Box;
 using Looseloop.Procedures.Read;
 using Looseloop.Readings;
 
@@ -13,10 +12,13 @@ public static class TrackedReading
     /// <summary>The budget term of the held terms: only tracked readings have it.</summary>
     public const string HeldTerm = "held curve";
 
+    /// <summary>The budget term of what one set of settings reads against the next.</summary>
+    private const string SettingsTerm = "settings";
+
     /// <summary>True if a reading was tracked, false if it is a full one.</summary>
     public static bool Is(Reading reading) => reading.Budget.Lines.Any(line => line.Term == HeldTerm);
 
-    internal static Reading Document(BoxSession box, ReadOptions options, TrackBasis basis, TrackedPoints taken, SetDifference difference)
+    internal static Reading Document(BoxIdentity box, ReadOptions options, TrackBasis basis, TrackedPoints taken, SetDifference difference)
     {
         TrackedFit fit = taken.Fit;
         Reading full = basis.Reading;
@@ -31,7 +33,7 @@ public static class TrackedReading
             BoardTimeUs = (taken.Points[0].BoardTimeUs + taken.Points[^1].BoardTimeUs) / 2,
             MonotonicS = options.Time.GetTimestamp() / (double)options.Time.TimestampFrequency,
             BoardSeconds = taken.BoardSeconds,
-            Box = box.Identity,
+            Box = box,
             F0Hz = fit.F0Hz * clock * (1 - pull),
             Q = 1 / ((1 / fit.Q) - (options.Pull?.LossAdded ?? 0)),
             PeakCounts = full.PeakCounts * fit.Scale * fit.Q / basis.Curve.Q,
@@ -41,8 +43,15 @@ public static class TrackedReading
             Reasons = reasons,
             Points = taken.Points,
             Dark = [taken.Look],
+            Basis = null,
         };
     }
+
+    /// <summary>The difference between sets of settings that a tracked reading carries.</summary>
+    internal static SetDifference DifferenceOf(Reading tracked) =>
+        tracked.Budget.Lines.FirstOrDefault(line => line.Term == SettingsTerm) is { } line
+            ? new SetDifference(line.F0Hz * Math.Sqrt(3), line.QRelative * Math.Sqrt(3))
+            : default;
 
     private static Budget Budget(Reading full, TrackedFit fit, SetDifference difference)
     {
@@ -53,7 +62,7 @@ public static class TrackedReading
         [
             new("noise", fit.F0NoiseHz, fit.QIsHeld ? 0 : fit.QNoiseRelative, true, Math.Max(1, fit.DegreesOfFreedom), "the samples' own scatter, or the points' about the curve"),
             new(HeldTerm, fit.F0HeldHz, qHeld, true, fullNoise?.DegreesOfFreedom ?? double.PositiveInfinity, "feed-through terms of the last full reading"),
-            new("settings", difference.F0Hz / root3, difference.QRelative / root3, true, double.PositiveInfinity, "one set of settings against the next"),
+            new(SettingsTerm, difference.F0Hz / root3, difference.QRelative / root3, true, double.PositiveInfinity, "one set of settings against the next"),
             .. full.Budget.Lines.Where(line => !line.Repeatability),
         ];
         return new Budget(lines);

@@ -19,9 +19,6 @@ public sealed class Tracker(ReadOptions options)
     /// <summary>Ring times until what is left of the own ring is below a thousandth of a count.</summary>
     private const double RingsToDie = 15;
 
-    /// <summary>A residual this small, of the peak, moves f0 and Q by less than the interval allows.</summary>
-    private const double HarmlessResidual = 0.004;
-
     private TrackBasis? _basis;
     private IReadOnlyList<Setting> _settings = [];
     private SetDifference _difference;
@@ -155,14 +152,7 @@ public sealed class Tracker(ReadOptions options)
             return TrackEnd.PeakLeft;
         }
 
-        double amplitude = fit.Scale * fit.Q / basis.Curve.Q;
-        if (amplitude is < 0.7 or > 1.4 || fit.Q / basis.Curve.Q is < 0.8 or > 1.25)
-        {
-            return TrackEnd.FarFromCurve;
-        }
-
-        double noise = Math.Sqrt(points.Average(point => point.Variance)) / (amplitude * Math.Sqrt(basis.Curve.PeakPower));
-        return fit.ResidualRatio > Math.Max(HarmlessResidual, 5 * noise) ? TrackEnd.OtherCurve : TrackEnd.None;
+        return basis.Judge(fit, points);
     }
 
     /// <summary>Noise of a hundred samples strays by some four standard deviations.</summary>
@@ -180,5 +170,5 @@ public sealed class Tracker(ReadOptions options)
     }
 
     private Reading Document(BoxSession box, TrackBasis basis, TrackedPoints taken) =>
-        TrackedReading.Document(box, options, basis, taken, _difference);
+        TrackedReading.Document(box.Identity, options, basis, taken, _difference);
 }

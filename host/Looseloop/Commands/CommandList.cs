@@ -18,6 +18,7 @@ internal static class CommandList
         yield return HistoryCommand.Create(shell);
         yield return ShowCommand.Create(shell);
         yield return CompareCommand.Create(shell);
+        yield return RefitCommand.Create(shell);
         yield return DriftCommand.Create(shell);
         yield return ExportCommand.Create(shell);
         yield return ImportCommand.Create(shell);

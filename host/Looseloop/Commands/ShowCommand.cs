@@ -55,6 +55,13 @@ internal sealed class ShowCommand(Shell shell)
                 json.WriteNumber("reading", number);
                 json.WriteNumber("run", figures.Run);
                 json.Figure("refit_of", figures.RefitOf ?? double.NaN);
+                json.WriteStartArray("refits");
+                foreach (ReadingSummary refit in record.Refits(number))
+                {
+                    json.WriteNumberValue(refit.Number);
+                }
+
+                json.WriteEndArray();
                 ReadingJson.Write(json, reading);
             }));
             return ExitCode.Ok;
@@ -104,7 +111,7 @@ internal sealed class ShowCommand(Shell shell)
         foreach (ReadingSummary refit in record.Refits(number))
         {
             shell.Out.MarkupLineInterpolated(
-                $"fitted again as reading {refit.Number}, {RecordWords.Time(shell, refit.Utc)}: f0 {RecordWords.F0(refit)} Hz, Q {RecordWords.Q(refit)}");
+                $"fitted again as reading {refit.Number}, {RecordWords.Time(shell, refit.Utc)}: f0 {RecordWords.F0(refit)} Hz, Q {RecordWords.Q(refit)}, {refit.Verdict.ToString().ToLowerInvariant()}");
         }
     }
 

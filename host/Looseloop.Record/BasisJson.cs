@@ -1,0 +1,80 @@
+using System.Text.Json;
+using Looseloop.Readings;
+
+namespace Looseloop.Record;
+
+/// <summary>What a fit was made with as JSON, its points left out: they stand in a table of their own.</summary>
+internal static class BasisJson
+{
+    public static string Of(FitBasis basis) => FactJson.Object(json => Write(json, basis));
+
+    public static void Write(Utf8JsonWriter json, FitBasis basis)
+    {
+        json.WriteStartObject("law");
+        FactJson.Write(json, basis.Law);
+        json.WriteEndObject();
+        ReadingJson.Number(json, "prefactor_exponent", basis.PrefactorExponent);
+        if (basis.Clock is { } clock)
+        {
+            json.WriteStartObject("clock");
+            FactJson.Write(json, clock);
+            json.WriteEndObject();
+        }
+
+        if (basis.Pull is { } pull)
+        {
+            json.WriteStartObject("pull");
+            FactJson.Write(json, pull);
+            json.WriteEndObject();
+        }
+
+        json.WriteBoolean("commissioned", basis.Commissioned);
+        ReadingJson.Number(json, "planned_f0_hz", basis.PlannedF0Hz);
+        ReadingJson.Number(json, "planned_q", basis.PlannedQ);
+        ReadingJson.Number(json, "planned_duty", basis.PlannedDuty);
+        json.WriteNumber("dwell_us", basis.DwellUs);
+        json.WriteNumber("samples", basis.Samples);
+        json.WriteNumber("spacing_us", basis.SpacingUs);
+        ReadingJson.Number(json, "other_duty", basis.OtherDuty);
+        json.WriteNumber("missing", basis.Missing);
+        json.WriteBoolean("saturated", basis.Saturated);
+        Array(json, "harmonics", basis.Harmonics, value => json.WriteNumberValue(value));
+        Array(json, "neighbours_hz", basis.NeighboursHz, value => json.WriteNumberValue(value));
+        Array(json, "overtones_hz", basis.OvertonesHz, value => json.WriteNumberValue(value));
+    }
+
+    /// <summary>The basis of a text, without points.</summary>
+    public static FitBasis From(string text) => FactJson.Read(text, json => new FitBasis
+    {
+        Law = FactJson.ToLaw(json.GetProperty("law")),
+        PrefactorExponent = FactJson.Figure(json, "prefactor_exponent"),
+        Clock = json.TryGetProperty("clock", out JsonElement clock) ? FactJson.ToClock(clock) : null,
+        Pull = json.TryGetProperty("pull", out JsonElement pull) ? FactJson.ToPull(pull) : null,
+        Commissioned = json.GetProperty("commissioned").GetBoolean(),
+        PlannedF0Hz = FactJson.Figure(json, "planned_f0_hz"),
+        PlannedQ = FactJson.Figure(json, "planned_q"),
+        PlannedDuty = FactJson.Figure(json, "planned_duty"),
+        DwellUs = json.GetProperty("dwell_us").GetInt32(),
+        Samples = json.GetProperty("samples").GetInt32(),
+        SpacingUs = json.GetProperty("spacing_us").GetInt32(),
+        OtherDuty = FactJson.Figure(json, "other_duty"),
+        Missing = json.GetProperty("missing").GetInt32(),
+        Saturated = json.GetProperty("saturated").GetBoolean(),
+        Harmonics = [.. json.GetProperty("harmonics").EnumerateArray().Select(value => value.GetInt32())],
+        NeighboursHz = [.. json.GetProperty("neighbours_hz").EnumerateArray().Select(value => value.GetDouble())],
+        OvertonesHz = [.. json.GetProperty("overtones_hz").EnumerateArray().Select(value => value.GetDouble())],
+        AtOtherDuty = [],
+        AfterLongerDwell = [],
+    });
+
+    private static void Array<T>(Utf8JsonWriter json, string name, IEnumerable<T> values, Action<T> write)
+    {
+        json.WriteStartArray(name);
+        foreach (T value in values)
+        {
+            write(value);
+        }
+
+        json.WriteEndArray();
+    }
+}
