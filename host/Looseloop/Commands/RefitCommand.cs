@@ -93,7 +93,7 @@ internal sealed class RefitCommand(Shell shell)
         catch (OperationCanceledException)
         {
             status = RunStatus.Interrupted;
-            shell.Say($"{run.Count} readings were fitted again before the interruption, and are kept.");
+            shell.Say($"Fitted again before the interruption, and kept: {run.Count}.");
             throw;
         }
         finally
@@ -142,7 +142,8 @@ internal sealed class RefitCommand(Shell shell)
     {
         if (many && !json)
         {
-            shell.OutText.WriteLine($"{run.Count} readings were fitted again, {outcome.Changed} of them came out otherwise; {outcome.Refused} could not be.");
+            string were = run.Count == 1 ? "reading was" : "readings were";
+            shell.OutText.WriteLine($"{run.Count} {were} fitted again, {outcome.Changed} came out otherwise; {outcome.Refused} could not be.");
         }
 
         if (!parsed.GetValue(CommonOptions.Quiet))

@@ -9,6 +9,7 @@ internal static class RefitJson
 {
     public static void Write(Utf8JsonWriter json, RefitDone done)
     {
+        json.WriteNumber("schema_version", 1);
         json.WriteNumber("reading", done.Number);
         json.WriteNumber("refit", done.NewNumber);
         json.WriteBoolean("same", done.Changes.Same);
