@@ -12,9 +12,15 @@ public interface IBoxFacts
     /// <summary>The clock's error as last found, or null where it never was.</summary>
     ClockTrim? ClockOf(string box);
 
+    /// <summary>All commissionings of a box, the oldest first.</summary>
+    IReadOnlyList<CommissioningRecord> CommissioningsOf(string box);
+
     /// <summary>Keeps a law that a ladder has read. A call that returns has kept it.</summary>
     void Keep(string box, DetectorLaw law);
 
     /// <summary>Keeps a clock's error. A call that returns has kept it.</summary>
     void Keep(string box, ClockTrim trim);
+
+    /// <summary>Keeps a commissioning beside those before it. A call that returns has kept it.</summary>
+    void Keep(string box, CommissioningRecord commissioning);
 }

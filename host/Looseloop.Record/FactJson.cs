@@ -50,6 +50,36 @@ internal static class FactJson
 
     public static ClockTrim ToClock(JsonElement json) => new(Figure(json, "ppm"), Figure(json, "u_ppm"), On(json)!.Value);
 
+    public static string Of(CommissioningRecord commissioning) => Object(json =>
+    {
+        On(json, commissioning.Utc);
+        json.WriteString("board", commissioning.Board);
+        json.WriteString("firmware", commissioning.FirmwareVersion);
+        json.WriteBoolean("interrupted", commissioning.Interrupted);
+        json.WriteStartArray("steps");
+        foreach (StepFinding finding in commissioning.Steps)
+        {
+            json.WriteStartObject();
+            json.WriteString("step", finding.Step.ToString());
+            json.WriteString("result", finding.Result.ToString());
+            json.WriteString("detail", finding.Detail);
+            json.WriteStartObject("figures");
+            foreach ((string name, double value) in finding.Figures)
+            {
+                ReadingJson.Number(json, name, value);
+            }
+
+            json.WriteEndObject();
+            json.WriteEndObject();
+        }
+
+        json.WriteEndArray();
+    });
+
+    public static CommissioningRecord ToCommissioning(string text) => Read(text, json => new CommissioningRecord(
+        On(json)!.Value, json.GetProperty("board").GetString()!, json.GetProperty("firmware").GetString()!,
+        [.. json.GetProperty("steps").EnumerateArray().Select(ToFinding)], json.GetProperty("interrupted").GetBoolean()));
+
     public static string Of(Pull pull, IReadOnlyDictionary<string, string> setUp) => Object(json =>
     {
         json.WriteString("set_up", TextMap.ToJson(setUp));
@@ -72,6 +102,12 @@ internal static class FactJson
 
     /// <summary>The set-up that a pull belongs to, as its JSON text.</summary>
     public static string SetUpOf(string pull) => Read(pull, json => json.GetProperty("set_up").GetString()!);
+
+    private static StepFinding ToFinding(JsonElement json) => new(
+        Enum.Parse<CommissioningStep>(json.GetProperty("step").GetString()!), Enum.Parse<StepResult>(json.GetProperty("result").GetString()!),
+        json.GetProperty("detail").GetString()!,
+        json.GetProperty("figures").EnumerateObject().ToDictionary(
+            figure => figure.Name, figure => figure.Value.ValueKind == JsonValueKind.Number ? figure.Value.GetDouble() : double.NaN));
 
     public static double Figure(JsonElement json, string name) =>
         json.TryGetProperty(name, out JsonElement value) && value.ValueKind == JsonValueKind.Number ? value.GetDouble() : double.NaN;

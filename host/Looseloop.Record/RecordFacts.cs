@@ -9,6 +9,7 @@ public sealed class RecordFacts(RecordStore store, string hostVersion) : IBoxFac
 {
     private const string Law = "detector-law";
     private const string Clock = "clock-trim";
+    private const string Commissioned = "commissioning";
     private const string SetUp = "set-up";
     private const string Pulled = "pull";
 
@@ -26,6 +27,14 @@ public sealed class RecordFacts(RecordStore store, string hostVersion) : IBoxFac
 
     /// <inheritdoc/>
     public void Keep(string box, ClockTrim trim) => Keep(FactSubject.Box, box, Clock, trim.On, FactJson.Of(trim));
+
+    /// <inheritdoc/>
+    public IReadOnlyList<CommissioningRecord> CommissioningsOf(string box) =>
+        [.. store.Reader.Facts(FactSubject.Box, box, Commissioned).Select(fact => FactJson.ToCommissioning(fact.Json))];
+
+    /// <inheritdoc/>
+    public void Keep(string box, CommissioningRecord commissioning) =>
+        Keep(FactSubject.Box, box, Commissioned, commissioning.Utc, FactJson.Of(commissioning));
 
     /// <inheritdoc/>
     public IReadOnlyDictionary<string, string> SetUpOf(string coil) =>

@@ -63,4 +63,40 @@ public sealed class RecordFactsTests : IDisposable
         _facts.Keep("tall", _ring, _now);
         Assert.Equal(_ring.OrderBy(p => p.Key), _facts.SetUpOf("tall").OrderBy(p => p.Key));
     }
+
+    [Fact]
+    public void Commissionings_come_back_whole_and_in_order_and_none_replaces_another()
+    {
+        StepFinding dark = new(
+            CommissioningStep.Dark, StepResult.Failed, "No pedestal.", new Dictionary<string, double> { ["mean_counts"] = 0.5, ["moved_counts"] = double.NaN });
+        CommissioningRecord first = new(_now, "esp32", "0.1.0", [dark, new StepFinding(CommissioningStep.Ladder, StepResult.NotDone, "-")], true);
+        CommissioningRecord second = first with { Utc = _now.AddHours(1), Steps = [dark with { Result = StepResult.Passed }], Interrupted = false };
+        Assert.Empty(_facts.CommissioningsOf("port a"));
+        _facts.Keep("port a", first);
+        _facts.Keep("port a", second);
+        IReadOnlyList<CommissioningRecord> kept = _facts.CommissioningsOf("port a");
+        Assert.Equal([first.Utc, second.Utc], kept.Select(one => one.Utc));
+        Assert.Equal([true, false], kept.Select(one => one.Interrupted));
+        Assert.Equal(("esp32", "0.1.0"), (kept[0].Board, kept[0].FirmwareVersion));
+        Assert.Equal([StepResult.Failed, StepResult.NotDone], kept[0].Steps.Select(one => one.Result));
+        Assert.Equal(dark.Figures, kept[0].Steps[0].Figures);
+        Assert.Equal("No pedestal.", kept[0].Steps[0].Detail);
+        Assert.Empty(_facts.CommissioningsOf("port b"));
+    }
+
+    [Fact]
+    public void A_step_stands_as_last_found_out_on_this_board_with_this_firmware()
+    {
+        StepFinding[] all = [.. Enum.GetValues<CommissioningStep>().Select(step => new StepFinding(step, StepResult.Passed, ""))];
+        CommissioningRecord whole = new(_now, "esp32", "0.1.0", all, false);
+        CommissioningRecord Redone(StepResult result) => whole with { Steps = [new StepFinding(CommissioningStep.Interlock, result, "")] };
+        bool Stands(params CommissioningRecord[] records) => CommissioningStanding.Of(records, "esp32", "0.1.0").IsComplete;
+        Assert.True(Stands(whole));
+        Assert.True(Stands(whole, Redone(StepResult.Skipped)));
+        Assert.False(Stands(whole, Redone(StepResult.Failed)));
+        Assert.True(Stands(whole, Redone(StepResult.Failed), Redone(StepResult.Passed)));
+        Assert.False(Stands(Redone(StepResult.Passed)));
+        Assert.False(CommissioningStanding.Of([whole], "esp32", "0.2.0").IsComplete);
+        Assert.False(CommissioningStanding.Of([whole], "esp32s3", "0.1.0").IsComplete);
+    }
 }
