@@ -65,6 +65,9 @@ public sealed class VirtualBoard : IExcitation, IPickup, IClock, ILink
 
     internal Scene Scene => _scene;
 
+    /// <summary>Somebody brings a tone source near the pickup (its begin and end do not count), or takes it away.</summary>
+    public void Bring(Carrier? source) => _scene.Bring(_clock.Seconds, source);
+
     public long NowUs()
     {
         Spend(_costs.NowUs);

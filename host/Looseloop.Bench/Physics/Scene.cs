@@ -11,12 +11,12 @@ internal sealed class Scene
     private readonly World _world;
     private readonly CoilResponse _response;
     private readonly Detector _detector;
-    private readonly Ether _ether;
+    private Ether _ether;
     private readonly Disturbance _disturbance;
     private readonly Converter _converter;
     private readonly NoiseSource _noise;
     private readonly double _pedestalCounts;
-    private readonly bool _plain;
+    private bool _plain;
     private readonly bool _drifts;
     private double _cachedLevel = double.NaN;
     private double _cachedSignal;
@@ -54,6 +54,17 @@ internal sealed class Scene
     {
         _detector.Leave(timeS);
         _response.Stop(timeS);
+        Entered(timeS);
+    }
+
+    /// <summary>Brings another source near the pickup from now on, or takes it away.</summary>
+    public void Bring(double timeS, Carrier? source)
+    {
+        _detector.Leave(timeS);
+        Room room = _world.Room;
+        _ether = new Ether(
+            source is null ? _world : _world with { Room = room with { Carriers = [.. room.Carriers, source with { FromS = timeS }] } }, _noise);
+        _plain = _ether.Silent && !_disturbance.Modulates;
         Entered(timeS);
     }
 
