@@ -28,6 +28,9 @@ internal sealed class LineChannel(IByteLink link)
 
     public long Now => link.Time.GetTimestamp();
 
+    /// <summary>Since this side's last line.</summary>
+    public TimeSpan SinceSent => Since(_lastSent);
+
     public TimeSpan Since(long timestamp) => link.Time.GetElapsedTime(timestamp);
 
     /// <summary>Sends a request under a new number.</summary>

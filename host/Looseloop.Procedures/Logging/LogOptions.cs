@@ -13,6 +13,9 @@ public sealed record LogOptions
     /// <summary>Says the detector's law once the box has identified itself; null where <see cref="Read"/> has the right one.</summary>
     public Func<BoxSession, DetectorLaw>? LawOf { get; init; }
 
+    /// <summary>Says whether a box is commissioned once it has identified itself; null where <see cref="Read"/> has it right.</summary>
+    public Func<BoxIdentity, bool>? CommissionedOf { get; init; }
+
     /// <summary>From reading to reading; zero for one after the other.</summary>
     public TimeSpan Every { get; init; } = TimeSpan.FromSeconds(10);
 

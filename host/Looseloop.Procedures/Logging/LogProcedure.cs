@@ -65,6 +65,7 @@ public sealed class LogProcedure
         try
         {
             _read = _options.Read with { Time = _time, Law = _keeper.Begin() };
+            _read = _read with { Commissioned = _options.CommissionedOf?.Invoke(_keeper.Known!) ?? _read.Commissioned };
             _tracker = new Tracker(_read);
             _writer.Start(_options, _keeper.Known!);
             _startS = _writer.NowS;

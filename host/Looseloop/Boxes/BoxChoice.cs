@@ -50,7 +50,8 @@ internal static class BoxChoice
     {
         string name = NameOf(shell, parsed);
         World? world = WorldOf(name);
-        IByteLink link = world is null ? OpenPort(name) : new VirtualBox(world, parsed.GetValue(SeedOption));
+        VirtualBox? bench = world is null ? null : new VirtualBox(world, parsed.GetValue(SeedOption));
+        IByteLink link = bench ?? (IByteLink)OpenPort(name);
         TextWriter? trace = null;
         try
         {
@@ -67,7 +68,7 @@ internal static class BoxChoice
                 Procedures.Interlock.Set(session, law);
             }
 
-            return new ChosenBox(session, law, trace);
+            return new ChosenBox(session, law, trace, bench);
         }
         catch
         {

@@ -11,6 +11,7 @@ internal static class CommandList
         yield return ReadCommand.Create(shell);
         yield return SurveyCommand.Create(shell);
         yield return LogCommand.Create(shell);
+        yield return CommissionCommand.Create(shell);
         yield return LadderCommand.Create(shell);
         yield return StandoffCommand.Create(shell);
         yield return SetUpCommand.Create(shell);

@@ -110,6 +110,7 @@ internal sealed class LogCommand(Shell shell)
         return plain with
         {
             LawOf = box => facts.LawOf(name) ?? (world is null ? UndeclaredBox.LawOf(box) : BoxChoice.LawOf(world)),
+            CommissionedOf = box => KnownFacts.IsCommissioned(box, facts),
             Every = Seconds(parsed.GetValue(_every)) ?? plain.Every,
             For = Seconds(parsed.GetValue(_for)),
             UntilSettled = parsed.GetValue(_untilSettled),

@@ -74,7 +74,7 @@ internal sealed class ReadCommand(Shell shell)
             HostVersion = AppVersion.Text,
             Time = shell.Time,
         };
-        options = KnownFacts.Apply(shell, parsed, options, box.Session.Identity.Port);
+        options = KnownFacts.Apply(shell, parsed, options, box.Session.Identity);
         if (parsed.GetValue(_of) == "primary")
         {
             // What stands with the secondary says nothing of a tank that is read alone.

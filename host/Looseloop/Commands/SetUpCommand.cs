@@ -11,14 +11,6 @@ namespace Looseloop.Commands;
 /// <summary><c>setup</c>: what stands with a coil, kept with it and part of every reading.</summary>
 internal sealed class SetUpCommand(Shell shell)
 {
-    /// <summary>The product's cautions about what it may be used on.</summary>
-    private static readonly string[] _cautions =
-    [
-        "For a coil that is not energised: driver off, locked out, tank capacitors discharged and shorted, earth on.",
-        "A resonant coil can kill, burn, and upset pacemakers and electronics; the field reaches beyond the arcs. Local rules, the venue's licence and a competent person come first.",
-        "A sweep box is no proof that a coil is dead.",
-    ];
-
     private readonly Argument<string> _coil = new("coil") { Description = "The coil's name." };
     private readonly Option<bool> _clear = new("--clear") { Description = "Forget what was stated before." };
     private readonly Dictionary<string, Option<string?>> _fields = new()
@@ -95,7 +87,7 @@ internal sealed class SetUpCommand(Shell shell)
                 json.WriteEndObject();
                 json.WriteBoolean("pull_known", pullKnown);
                 json.Texts("advice", SetUpFields.Advice(setUp));
-                json.Texts("cautions", _cautions);
+                json.Texts("cautions", BoxCautions.All);
             }));
             return;
         }
@@ -118,7 +110,7 @@ internal sealed class SetUpCommand(Shell shell)
             shell.Say($"Not stated: {string.Join(", ", unstated)}. What is not stated widens the absolute interval.");
         }
 
-        foreach (string sentence in SetUpFields.Advice(setUp).Concat(_cautions))
+        foreach (string sentence in SetUpFields.Advice(setUp).Concat(BoxCautions.All))
         {
             shell.Say(sentence);
         }

@@ -9,8 +9,8 @@ namespace Looseloop.Records;
 /// <summary>What earlier ladders, trims, standoffs and statements have left in the record, put to use.</summary>
 internal static class KnownFacts
 {
-    /// <summary>The options of a reading with the law, clock, set-up and pull that the record knows; as they are where there is no record.</summary>
-    public static ReadOptions Apply(Shell shell, ParseResult parsed, ReadOptions options, string box)
+    /// <summary>The options of a reading with the law, clock, commissioning, set-up and pull that the record knows; as they are where there is no record.</summary>
+    public static ReadOptions Apply(Shell shell, ParseResult parsed, ReadOptions options, BoxIdentity box)
     {
         if (!File.Exists(RecordChoice.PathOf(shell, parsed)))
         {
@@ -30,15 +30,20 @@ internal static class KnownFacts
     }
 
     /// <summary>The same from open facts.</summary>
-    public static ReadOptions Apply(ReadOptions options, string box, RecordFacts facts)
+    public static ReadOptions Apply(ReadOptions options, BoxIdentity box, RecordFacts facts)
     {
         IReadOnlyDictionary<string, string> setUp = options.Coil is string name && options.SetUp.Count == 0 ? facts.SetUpOf(name) : options.SetUp;
         return options with
         {
-            Law = facts.LawOf(box) is DetectorLaw law && law.Kind == options.Law.Kind ? law : options.Law,
-            Clock = facts.ClockOf(box) ?? options.Clock,
+            Law = facts.LawOf(box.Port) is DetectorLaw law && law.Kind == options.Law.Kind ? law : options.Law,
+            Clock = facts.ClockOf(box.Port) ?? options.Clock,
+            Commissioned = IsCommissioned(box, facts),
             SetUp = setUp,
             Pull = options.Coil is string coil ? facts.PullOf(coil, setUp) ?? options.Pull : options.Pull,
         };
     }
+
+    /// <summary>True if every step of commissioning stands passed for this board with this firmware.</summary>
+    public static bool IsCommissioned(BoxIdentity box, RecordFacts facts) =>
+        CommissioningStanding.Of(facts.CommissioningsOf(box.Port), box.Board, box.FirmwareVersion).IsComplete;
 }

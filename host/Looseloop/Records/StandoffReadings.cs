@@ -78,7 +78,7 @@ internal sealed class StandoffReadings(Shell shell, RecordStore store, RecordFac
         };
 
         // What an earlier standoff found must not be in the readings of this one.
-        options = KnownFacts.Apply(options, box.Identity.Port, facts) with { Pull = null };
+        options = KnownFacts.Apply(options, box.Identity, facts) with { Pull = null };
         var progress = new ProgressLine(shell, parsed.GetValue(CommonOptions.Quiet));
         try
         {

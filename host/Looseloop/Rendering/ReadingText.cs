@@ -60,6 +60,10 @@ internal static class ReadingText
         table.AddRow("combined, repeatability", Digits(reading.Budget.F0Hz(false)), Digits(100 * reading.Budget.QRelative(false)), "", "");
         table.AddRow("combined, absolute", Digits(reading.Budget.F0Hz(true)), Digits(100 * reading.Budget.QRelative(true)), "", "");
         console.Write(table);
+        if (reading.Reasons.Any(reason => reason.Code == ReasonCode.NotCommissioned))
+        {
+            console.MarkupLine("[yellow]The box was never commissioned: that these terms are all there is has not been checked.[/]");
+        }
     }
 
     private static string Digits(double value) => value == 0 ? "-" : value.ToString(value >= 10 ? "0" : value >= 1 ? "0.0" : "0.000", System.Globalization.CultureInfo.InvariantCulture);
