@@ -36,6 +36,18 @@ public partial class WorldKeyTests
         Assert.Equal(new Carrier(), world.Room.Carriers.Single());
     }
 
+    [Theory]
+    [InlineData("diode", DetectorKind.Diode)]
+    [InlineData("peak", DetectorKind.Peak)]
+    [InlineData("peak_to_peak", DetectorKind.PeakToPeak)]
+    [InlineData("rms_log", DetectorKind.RmsLog)]
+    public void WhatIsLeftOutIsThatOfAnOrdinaryDetectorOfTheKind(string word, DetectorKind kind)
+    {
+        var ordinary = DetectorParameters.Of(kind);
+        Assert.Equal(ordinary, WorldFile.Read("a.toml", "a", $"[detector]\nkind = \"{word}\"\n").Detector);
+        Assert.Equal(ordinary with { Gain = 7 }, WorldFile.Read("a.toml", "a", $"[detector]\nkind = \"{word}\"\ngain = 7\n").Detector);
+    }
+
     [Fact]
     public void EveryKeyThatIsReadIsListed()
     {

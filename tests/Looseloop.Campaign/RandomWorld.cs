@@ -185,7 +185,15 @@ public static class RandomWorld
         ],
     };
 
-    private static World WithDetector(World world, DetectorKind kind) => world with { Detector = world.Detector with { Kind = kind } };
+    /// <summary>An ordinary detector of a kind. Where it is no peak detector, the drawn time constant stays.</summary>
+    private static World WithDetector(World world, DetectorKind kind)
+    {
+        var ordinary = DetectorParameters.Of(kind);
+        return world with
+        {
+            Detector = kind == DetectorKind.Peak ? ordinary : ordinary with { TimeConstantUs = world.Detector.TimeConstantUs },
+        };
+    }
 
     private static double Uniform(Random random, double low, double high) => low + ((high - low) * random.NextDouble());
 

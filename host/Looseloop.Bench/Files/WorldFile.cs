@@ -169,11 +169,12 @@ internal sealed class WorldFile
         });
     }
 
-    private static DetectorParameters Detector(WorldSection section, DetectorParameters ordinary) => new()
+    // What is left out is that of an ordinary detector of the kind.
+    private static DetectorParameters Detector(WorldSection section, DetectorParameters usual)
     {
-        Kind = section.Choice(
+        DetectorKind kind = section.Choice(
             "kind",
-            ordinary.Kind,
+            usual.Kind,
             ("rms_linear", DetectorKind.RmsLinear),
             ("rms_log", DetectorKind.RmsLog),
             ("square", DetectorKind.Square),
@@ -181,17 +182,23 @@ internal sealed class WorldFile
             ("logarithm", DetectorKind.Logarithm),
             ("diode", DetectorKind.Diode),
             ("peak", DetectorKind.Peak),
-            ("peak_to_peak", DetectorKind.PeakToPeak)),
-        TimeConstantUs = section.Number("time_constant_us", ordinary.TimeConstantUs, 0, 1e6),
-        DecayUs = section.Number("decay_us", ordinary.DecayUs, 0, 1e6),
-        Gain = section.Number("gain", ordinary.Gain, 1e-6, 1e6),
-        MvPerDb = section.Number("mv_per_db", ordinary.MvPerDb, 0.1, 1000),
-        InterceptDbV = section.Number("intercept_dbv", ordinary.InterceptDbV, -200, 20),
-        DiodeMv = section.Number("diode_mv", ordinary.DiodeMv, 1, 1000),
-        FloorMv = section.Number("floor_mv", ordinary.FloorMv, 0, 1000),
-        PedestalVolts = section.Number("pedestal_volts", ordinary.PedestalVolts, 0, 10),
-        CeilingVolts = section.Number("ceiling_volts", ordinary.CeilingVolts, 0.1, 100),
-    };
+            ("peak_to_peak", DetectorKind.PeakToPeak));
+        var ordinary = DetectorParameters.Of(kind);
+        return new DetectorParameters
+        {
+            Kind = kind,
+            TimeConstantUs = section.Number("time_constant_us", ordinary.TimeConstantUs, 0, 1e6),
+            DecayUs = section.Number("decay_us", ordinary.DecayUs, 0, 1e6),
+            Gain = section.Number("gain", ordinary.Gain, 1e-6, 1e6),
+            MvPerDb = section.Number("mv_per_db", ordinary.MvPerDb, 0.1, 1000),
+            InterceptDbV = section.Number("intercept_dbv", ordinary.InterceptDbV, -200, 20),
+            DiodeMv = section.Number("diode_mv", ordinary.DiodeMv, 1, 1000),
+            FloorMv = section.Number("floor_mv", ordinary.FloorMv, 0, 1000),
+            OutputNoiseMv = section.Number("output_noise_mv", ordinary.OutputNoiseMv, 0, 1000),
+            PedestalVolts = section.Number("pedestal_volts", ordinary.PedestalVolts, 0, 10),
+            CeilingVolts = section.Number("ceiling_volts", ordinary.CeilingVolts, 0.1, 100),
+        };
+    }
 
     private static BoardParameters Board(WorldSection section, BoardParameters ordinary) => new()
     {

@@ -26,11 +26,46 @@ public sealed record DetectorParameters
     /// <summary>Noise at its input, millivolts rms: adds power, as a floor below which nothing is seen.</summary>
     public double FloorMv { get; init; } = 0.3;
 
+    /// <summary>Noise of its output with nothing at its input, millivolts rms; the converter's own comes to it.</summary>
+    public double OutputNoiseMv { get; init; }
+
     /// <summary>Its output with nothing at its input, volts.</summary>
     public double PedestalVolts { get; init; } = 0.25;
 
     /// <summary>Where its output stops, volts.</summary>
     public double CeilingVolts { get; init; } = 3.2;
+
+    /// <summary>
+    /// An ordinary detector of a kind. Diode and peak detector are those of hardware-notes, with what their netlists gave
+    /// (hardware-notes/spice/results.txt, to which a test holds these figures).
+    /// </summary>
+    public static DetectorParameters Of(DetectorKind kind) => kind switch
+    {
+        DetectorKind.Diode => new DetectorParameters
+        {
+            Kind = kind,
+
+            // A transistor's junction: kT/q at 27 degrees, no ideality.
+            DiodeMv = 25.9,
+            Gain = 100,
+
+            // At half of n V_t, where the notes want it read. A strong signal charges in 24 and discharges in 56.
+            TimeConstantUs = 36,
+            OutputNoiseMv = 0.17,
+            PedestalVolts = 0.3,
+        },
+        DetectorKind.Peak or DetectorKind.PeakToPeak => new DetectorParameters
+        {
+            Kind = kind,
+
+            // At 1 V, where its law is nearest a straight line; of a weaker signal the real one shows less.
+            TimeConstantUs = 3.8,
+            DecayUs = 100,
+            Gain = 1,
+            PedestalVolts = 0.3,
+        },
+        _ => new DetectorParameters { Kind = kind },
+    };
 }
 
 /// <summary>What a detector makes of the waveform.</summary>

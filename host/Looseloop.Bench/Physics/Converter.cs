@@ -42,7 +42,8 @@ internal sealed class Converter
     /// <summary>One conversion of a level.</summary>
     /// <param name="level">From <see cref="Level"/>.</param>
     /// <param name="abovePedestalCounts">How much of it is signal, for the noise that goes with it.</param>
-    public int Convert(double level, double abovePedestalCounts)
+    /// <param name="sourceNoiseCounts">Noise of what is converted, counts rms.</param>
+    public int Convert(double level, double abovePedestalCounts, double sourceNoiseCounts = 0)
     {
         if (double.IsNaN(level))
         {
@@ -50,10 +51,10 @@ internal sealed class Converter
         }
 
         double noise = _parameters.NoiseCounts;
-        if (_parameters.NoiseOfLevel != 0)
+        if (_parameters.NoiseOfLevel != 0 || sourceNoiseCounts != 0)
         {
             double more = _parameters.NoiseOfLevel * abovePedestalCounts;
-            noise = Math.Sqrt((noise * noise) + (more * more));
+            noise = Math.Sqrt((noise * noise) + (more * more) + (sourceNoiseCounts * sourceNoiseCounts));
         }
 
         double counts = level + (noise * _noise.Normal());

@@ -16,6 +16,7 @@ internal sealed class Scene
     private readonly Converter _converter;
     private readonly NoiseSource _noise;
     private readonly double _pedestalCounts;
+    private readonly double _outputNoiseCounts;
     private bool _plain;
     private readonly bool _drifts;
     private double _cachedLevel = double.NaN;
@@ -32,6 +33,7 @@ internal sealed class Scene
         _disturbance = new Disturbance(world, _noise);
         _converter = new Converter(world, _noise);
         _pedestalCounts = world.Detector.PedestalVolts * _converter.CountsPerVolt;
+        _outputNoiseCounts = world.Detector.OutputNoiseMv * 1e-3 * _converter.CountsPerVolt;
         _plain = _ether.Silent && !_disturbance.Modulates;
         _drifts = Drift.Any(world.Room.WarmUp);
         _detector.Leave(0);
@@ -103,7 +105,7 @@ internal sealed class Scene
             return Convert(_cachedSignal, timeS);
         }
 
-        return _converter.Convert(_cachedLevel, _cachedLevel - _pedestalCounts);
+        return _converter.Convert(_cachedLevel, _cachedLevel - _pedestalCounts, _outputNoiseCounts);
     }
 
     /// <summary>One conversion of the buffered waveform, biased to the middle of the range.</summary>
@@ -143,7 +145,7 @@ internal sealed class Scene
         }
 
         double level = _converter.Level(Math.Min(volts, _world.Detector.CeilingVolts));
-        return _converter.Convert(level, level - _pedestalCounts);
+        return _converter.Convert(level, level - _pedestalCounts, _outputNoiseCounts);
     }
 
     private void Entered(double timeS)
