@@ -10,19 +10,18 @@ namespace Looseloop.Box;
 /// </summary>
 public sealed class BoxSession : IDisposable
 {
-    private static readonly TimeSpan _answerTime = TimeSpan.FromSeconds(1);
-    private static readonly TimeSpan _quietTime = TimeSpan.FromMilliseconds(700);
-    private static readonly TimeSpan _haltTime = TimeSpan.FromMilliseconds(500);
-    private const int Tries = 3;
-
-    private readonly LineChannel _channel;
-    private IReadOnlyList<Setting> _planned = [];
-    private long _firstUs = long.MaxValue;
-    private long _lastUs;
+    private readonly IByteLink _link;
+    private readonly BoardClock _clock = new();
+    private readonly BoxExchange _exchange;
+    private readonly HeldPlan _plan;
+    private readonly DrivenWork _work;
 
     private BoxSession(LineChannel channel, BoxIdentity identity)
     {
-        _channel = channel;
+        _link = channel.Link;
+        _exchange = new BoxExchange(channel, _clock);
+        _plan = new HeldPlan(_exchange);
+        _work = new DrivenWork(_exchange, _clock, _plan);
         Identity = identity;
         Grid = new SettingGrid(identity.MostDutyBits);
     }
@@ -32,16 +31,16 @@ public sealed class BoxSession : IDisposable
     /// <summary>The settings that this box can make.</summary>
     public SettingGrid Grid { get; }
 
-    public BoxLineCounters Counters => _channel.Counters;
+    public BoxLineCounters Counters => _exchange.Counters;
 
     /// <summary>The clock that this box lives by.</summary>
-    public TimeProvider Time => _channel.Link.Time;
+    public TimeProvider Time => _link.Time;
 
     /// <summary>Board time from the first to the last thing the box reported in this session, seconds.</summary>
-    public double BoardSeconds => _lastUs > _firstUs ? (_lastUs - _firstUs) * 1e-6 : 0;
+    public double BoardSeconds => _clock.Seconds;
 
     /// <summary>The latest board time that the box has reported, microseconds.</summary>
-    public long BoardTimeUs => _lastUs;
+    public long BoardTimeUs => _clock.LatestUs;
 
     /// <summary>
     /// Identifies the box on a link. Opening a port may restart a board, so this waits up to <paramref name="patience"/> for it.
@@ -51,41 +50,15 @@ public sealed class BoxSession : IDisposable
     public static BoxSession Open(IByteLink link, TimeSpan patience, CancellationToken cancel = default)
     {
         var channel = new LineChannel(link);
-        channel.Clear();
-        long begun = channel.Now;
-        do
-        {
-            cancel.ThrowIfCancellationRequested();
-            channel.Send(Verb.Identify);
-            long asked = channel.Now;
-            while (channel.Since(asked) < _answerTime && channel.Receive(_answerTime - channel.Since(asked)) is BoxMessage message)
-            {
-                if (message is BoxAnswer answer)
-                {
-                    return new BoxSession(channel, Identify(link.Name, answer));
-                }
-            }
-
-            // A box that was left in mid-sweep answers nothing else until it is halted.
-            channel.Send(Verb.Halt);
-            channel.Receive(TimeSpan.FromMilliseconds(100));
-        }
-        while (channel.Since(begun) < patience);
-
-        string heard = channel.Counters.Lines > 0
-            ? "something else is talking on that port"
-            : "nothing came back";
-        throw new BoxException(
-            BoxTrouble.NoAnswer,
-            $"No box answers on {link.Name}: {heard}. Check that this is the box's port, that its firmware is deployed, and that it has power.");
+        return new BoxSession(channel, BoxGreeting.Exchange(channel, patience, cancel));
     }
 
     /// <summary>Asks what may be driven and where the interlock stands.</summary>
-    public LimitsAnswer Limits() => Ask<LimitsAnswer>(Verb.Limits);
+    public LimitsAnswer Limits() => _exchange.Ask<LimitsAnswer>(Verb.Limits);
 
     /// <summary>Sets what may be driven, hertz, and the interlock's pedestal and threshold, counts, until the box restarts.</summary>
     public LimitsAnswer SetLimits(LimitsAnswer limits) =>
-        Ask<LimitsAnswer>(Verb.Limits, limits.LowHz, limits.HighHz, limits.PedestalCounts, limits.FieldCounts);
+        _exchange.Ask<LimitsAnswer>(Verb.Limits, limits.LowHz, limits.HighHz, limits.PedestalCounts, limits.FieldCounts);
 
     /// <summary>Measures with the drive off.</summary>
     /// <param name="milliseconds">For how long, 1..60 000.</param>
@@ -94,12 +67,12 @@ public sealed class BoxSession : IDisposable
     /// <param name="cancel">Halts the box.</param>
     public DarkLevel Dark(int milliseconds, int spacingUs = 0, int channel = Channel.Detector, CancellationToken cancel = default)
     {
-        _channel.Send(Verb.Dark, milliseconds, spacingUs, channel);
+        _exchange.Send(Verb.Dark, milliseconds, spacingUs, channel);
         while (true)
         {
-            if (Next(cancel) is DarkAnswer dark)
+            if (_exchange.Next(cancel) is DarkAnswer dark)
             {
-                return Level(dark);
+                return _exchange.Level(dark);
             }
         }
     }
@@ -113,11 +86,11 @@ public sealed class BoxSession : IDisposable
         var points = new List<RawPoint>();
         int both = request.ThereAndBack ? 2 : 1;
         DarkLevel? look = null;
-        foreach (IReadOnlyList<Setting> part in Parts(request.Settings, WireLimits.SweepPoints / both))
+        foreach (IReadOnlyList<Setting> part in HeldPlan.Parts(request.Settings, WireLimits.SweepPoints / both))
         {
             DarkLevel partLook = SweepPart(request with { Settings = part }, points, point, out List<Setting> missing, cancel);
             look ??= partLook;
-            for (int again = 0; missing.Count > 0 && again < Tries - 1; again++)
+            for (int again = 0; missing.Count > 0 && again < BoxExchange.Tries - 1; again++)
             {
                 Counters.PointsAskedAgain += missing.Count;
                 SweepPart(request with { Settings = missing, ThereAndBack = false }, points, point, out missing, cancel);
@@ -176,233 +149,55 @@ public sealed class BoxSession : IDisposable
     public RingResult Ring(RingRequest request, CancellationToken cancel = default)
     {
         Setting setting = request.Setting;
-        _channel.Send(
+        _exchange.Send(
             Verb.Ring, setting.DutyBits, setting.Divider, setting.DutyCount, request.DriveUs, request.DelayUs, request.StaggerUs,
             request.Samples, request.Repeats);
         var samples = new List<DecaySample>();
-        DarkLevel look = default;
-        int fault = FaultCode.None;
-        while (true)
-        {
-            switch (NextOrFault(cancel))
+        DarkLevel look = _work.Follow(
+            message =>
             {
-                case DarkAnswer dark:
-                    look = Level(dark);
-                    break;
-                case DecayAnswer decay:
+                if (message is DecayAnswer decay)
+                {
                     samples.AddRange(decay.SinceStopUs.Select((us, i) => new DecaySample(decay.Repeat, us, decay.Counts[i])));
-                    break;
-                case FaultAnswer answer:
-                    fault = FaultOrThrow(answer, begun: look.Samples > 0);
-                    break;
-                case DoneAnswer done:
-                    See(done.TimeUs);
-                    return fault != FaultCode.None || done.Ending == Ending.Faulted
-                        ? throw new BoxException(fault != FaultCode.None ? fault : done.FaultCode)
-                        : new RingResult(samples, look);
-            }
-        }
+                }
+            },
+            cancel);
+        return new RingResult(samples, look);
     }
 
     /// <summary>Lets time pass on the box's clock.</summary>
-    public void Pause(TimeSpan duration) => _channel.Link.Pause(duration);
+    public void Pause(TimeSpan duration) => _link.Pause(duration);
 
     /// <summary>Stops whatever the box is doing. Never throws for a box that does not answer: its own silence stop will act.</summary>
-    public void Halt()
-    {
-        try
-        {
-            _channel.Send(Verb.Halt);
-            long begun = _channel.Now;
-            while (_channel.Since(begun) < _haltTime && _channel.Receive(_haltTime) is BoxMessage message && message is not HaltedAnswer)
-            {
-            }
-        }
-        catch (LinkLostException)
-        {
-            // Gone already; the box stops by itself.
-        }
-    }
+    public void Halt() => _exchange.Halt();
 
     /// <summary>Closes the link.</summary>
-    public void Dispose() => _channel.Link.Dispose();
+    public void Dispose() => _link.Dispose();
 
     private DarkLevel SweepPart(
         SweepRequest request, List<RawPoint> points, Action<RawPoint>? told, out List<Setting> missing, CancellationToken cancel)
     {
-        Plan(request.Settings);
+        _plan.Set(request.Settings);
         int order = request.ThereAndBack ? SweepOrder.ThereAndBack : SweepOrder.AsPlanned;
-        _channel.Send(Verb.Sweep, request.DwellUs, request.Samples, request.SpacingUs, order, request.Pack, request.Channel);
+        _exchange.Send(Verb.Sweep, request.DwellUs, request.Samples, request.SpacingUs, order, request.Pack, request.Channel);
         var gathering = new SweepGathering(request, points, told);
-        DarkLevel look = default;
-        int fault = FaultCode.None;
-        while (true)
-        {
-            switch (NextOrFault(cancel))
-            {
-                case DarkAnswer dark:
-                    look = Level(dark);
-                    break;
-                case PointAnswer answer:
-                    See(answer.TimeUs);
-                    gathering.Add(answer);
-                    break;
-                case PackAnswer answer:
-                    See(answer.LastUs);
-                    gathering.Add(answer);
-                    break;
-                case FaultAnswer answer:
-                    fault = FaultOrThrow(answer, begun: look.Samples > 0);
-                    break;
-                case DoneAnswer done:
-                    See(done.TimeUs);
-                    missing = gathering.Missing();
-                    return fault != FaultCode.None || done.Ending == Ending.Faulted
-                        ? throw new BoxException(fault != FaultCode.None ? fault : done.FaultCode)
-                        : look;
-            }
-        }
-    }
-
-    private void Plan(IReadOnlyList<Setting> settings)
-    {
-        if (_planned.SequenceEqual(settings))
-        {
-            return;
-        }
-
-        _planned = [];
-        Ask<PlannedAnswer>(Verb.Plan);
-        int planned = 0;
-        foreach (PlanLines.Line line in PlanLines.For(settings))
-        {
-            planned = Ask<PlannedAnswer>(line.Verb, line.Fields).Settings;
-        }
-
-        if (planned != settings.Count)
-        {
-            throw new BoxException(BoxTrouble.Restarted, $"The box holds {planned} settings of {settings.Count}: it lost part of its plan. Try again.");
-        }
-
-        _planned = [.. settings];
-    }
-
-    private T Ask<T>(string verb, params ReadOnlySpan<long> fields)
-        where T : BoxMessage
-    {
-        _channel.Send(verb, fields);
-        for (int tries = 1; ; tries++)
-        {
-            long asked = _channel.Now;
-            bool garbled = false;
-            while (!garbled && _channel.Since(asked) < _answerTime && _channel.Receive(_answerTime - _channel.Since(asked)) is BoxMessage message)
+        DarkLevel look = _work.Follow(
+            message =>
             {
                 switch (message)
                 {
-                    case T answer:
-                        return answer;
-                    case FaultAnswer { Code: FaultCode.UnreadableLine or FaultCode.LineTooLong }:
-                        garbled = true;
+                    case PointAnswer answer:
+                        _clock.See(answer.TimeUs);
+                        gathering.Add(answer);
                         break;
-                    case FaultAnswer fault:
-                        throw new BoxException(fault.Code);
+                    case PackAnswer answer:
+                        _clock.See(answer.LastUs);
+                        gathering.Add(answer);
+                        break;
                 }
-            }
-
-            if (tries == Tries)
-            {
-                throw new BoxException(BoxTrouble.FellSilent, $"The box on {_channel.Link.Name} no longer answers. Check its power and cable, then try again.");
-            }
-
-            Counters.Repeated++;
-            _channel.Resend();
-        }
+            },
+            cancel);
+        missing = gathering.Missing();
+        return look;
     }
-
-    private BoxMessage Next(CancellationToken cancel)
-    {
-        BoxMessage message = NextOrFault(cancel);
-        return message is FaultAnswer fault ? throw new BoxException(fault.Code) : message;
-    }
-
-    private BoxMessage NextOrFault(CancellationToken cancel)
-    {
-        if (cancel.IsCancellationRequested)
-        {
-            Halt();
-            cancel.ThrowIfCancellationRequested();
-        }
-
-        BoxMessage? message = _channel.Receive(_quietTime, keepAwake: true);
-        if (message is null)
-        {
-            Halt();
-            throw new BoxException(
-                BoxTrouble.FellSilent,
-                $"The box on {_channel.Link.Name} fell silent in the middle of its work; its drive stops by itself. Check its power and cable, then read again.");
-        }
-
-        if (message is AliveAnswer alive)
-        {
-            See(alive.TimeUs);
-        }
-
-        return message;
-    }
-
-    /// <summary>A refusal ends the request here; a fault of work already begun is followed by <c>done</c>.</summary>
-    private int FaultOrThrow(FaultAnswer fault, bool begun)
-    {
-        bool refusedByLook = fault.Code is FaultCode.FieldPresent or FaultCode.PickupBelowRange;
-        if (fault.Code == FaultCode.PlanEmpty)
-        {
-            _planned = [];
-        }
-
-        return begun || refusedByLook ? fault.Code : throw new BoxException(fault.Code);
-    }
-
-    private DarkLevel Level(DarkAnswer dark)
-    {
-        See(dark.FromUs);
-        See(dark.ToUs);
-        return new DarkLevel(dark.Channel, dark.Samples, dark.Sum, dark.SumSquares, dark.Min, dark.Max, dark.FromUs, dark.ToUs);
-    }
-
-    private void See(long boardUs)
-    {
-        _firstUs = Math.Min(_firstUs, boardUs);
-        _lastUs = Math.Max(_lastUs, boardUs);
-    }
-
-    private static IEnumerable<IReadOnlyList<Setting>> Parts(IReadOnlyList<Setting> settings, int mostPoints)
-    {
-        var part = new List<Setting>();
-        foreach (Setting setting in settings)
-        {
-            // A plan entry for each is the worst case; runs only take fewer.
-            if (part.Count == mostPoints || (part.Count >= WireLimits.PlanEntries && PlanLines.For([.. part, setting]).Sum(line => line.Entries) > WireLimits.PlanEntries))
-            {
-                yield return part;
-                part = [];
-            }
-
-            part.Add(setting);
-        }
-
-        if (part.Count > 0)
-        {
-            yield return part;
-        }
-    }
-
-    private static BoxIdentity Identify(string port, BoxAnswer answer) =>
-        answer.ProtocolVersion == ProtocolVersion.Current
-            ? new BoxIdentity(
-                port, answer.Board, $"{answer.Major}.{answer.Minor}.{answer.Patch}", answer.ProtocolVersion, answer.BootId,
-                answer.MostDutyBits, answer.LowestHz, answer.HighestHz, answer.FullCounts, answer.Inputs)
-            : throw new BoxException(
-                BoxTrouble.OtherProtocol,
-                $"The box on {port} speaks version {answer.ProtocolVersion} of the protocol, this program version {ProtocolVersion.Current}. "
-                + "Deploy the firmware that came with this program.");
 }
