@@ -15,6 +15,7 @@ public sealed class BoxSession : IDisposable
     private readonly BoxExchange _exchange;
     private readonly HeldPlan _plan;
     private readonly DrivenWork _work;
+    private readonly SilenceTrial _silence;
 
     private BoxSession(LineChannel channel, BoxIdentity identity)
     {
@@ -22,6 +23,7 @@ public sealed class BoxSession : IDisposable
         _exchange = new BoxExchange(channel, _clock);
         _plan = new HeldPlan(_exchange);
         _work = new DrivenWork(_exchange, _clock, _plan);
+        _silence = new SilenceTrial(channel, _exchange, _clock, _plan);
         Identity = identity;
         Grid = new SettingGrid(identity.MostDutyBits);
     }
@@ -105,45 +107,8 @@ public sealed class BoxSession : IDisposable
     /// <param name="request">A sweep that takes much longer than the silence.</param>
     /// <param name="longest">How long to say nothing; a box that still works then is halted.</param>
     /// <param name="cancel">Halts the box.</param>
-    public SilenceResult FallSilent(SweepRequest request, TimeSpan longest, CancellationToken cancel = default)
-    {
-        Plan(request.Settings);
-        _channel.Send(
-            Verb.Sweep, request.DwellUs, request.Samples, request.SpacingUs, SweepOrder.AsPlanned, request.Pack, request.Channel);
-        BoxMessage? message;
-        while ((message = NextOrFault(cancel)) is not (PointAnswer or PackAnswer))
-        {
-            if (message is FaultAnswer refusal)
-            {
-                throw new BoxException(refusal.Code);
-            }
-        }
-
-        // The first point proves that it drives. From here on only this side's last line counts.
-        int fault = FaultCode.None;
-        while (_channel.SinceSent < longest)
-        {
-            if (cancel.IsCancellationRequested)
-            {
-                Halt();
-                cancel.ThrowIfCancellationRequested();
-            }
-
-            message = _channel.Receive(longest - _channel.SinceSent);
-            if (message is FaultAnswer answer)
-            {
-                fault = answer.Code;
-            }
-            else if (message is DoneAnswer done)
-            {
-                See(done.TimeUs);
-                return new SilenceResult(true, fault != FaultCode.None ? fault : done.FaultCode, _channel.SinceSent);
-            }
-        }
-
-        Halt();
-        return new SilenceResult(false, fault, longest);
-    }
+    public SilenceResult FallSilent(SweepRequest request, TimeSpan longest, CancellationToken cancel = default) =>
+        _silence.Run(request, longest, cancel);
 
     /// <summary>Takes a series of ring-downs.</summary>
     public RingResult Ring(RingRequest request, CancellationToken cancel = default)
