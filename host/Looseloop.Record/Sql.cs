@@ -1,4 +1,5 @@
 using Microsoft.Data.Sqlite;
+using SQLitePCL;
 
 namespace Looseloop.Record;
 
@@ -20,6 +21,13 @@ internal static class Sql
     public static DateTimeOffset Time(long microseconds) => DateTimeOffset.UnixEpoch.AddTicks(microseconds * 10);
 
     public static double Double(this SqliteDataReader row, int column) => row.IsDBNull(column) ? double.NaN : row.GetDouble(column);
+
+    /// <summary>A column of the row that a statement stands on, without the checks of the data reader; NaN for NULL.</summary>
+    public static double Real(this sqlite3_stmt row, int column) =>
+        raw.sqlite3_column_type(row, column) == raw.SQLITE_NULL ? double.NaN : raw.sqlite3_column_double(row, column);
+
+    /// <summary>The same of a whole number, which may not be NULL.</summary>
+    public static long Whole(this sqlite3_stmt row, int column) => raw.sqlite3_column_int64(row, column);
 
     public static string? Text(this SqliteDataReader row, int column) => row.IsDBNull(column) ? null : row.GetString(column);
 

@@ -24,6 +24,17 @@ internal static class SpeedTrial
         Array.Sort(ms);
         Say($"append, {Measured} durable ones: median {ms[Measured / 2]:0.00} ms, p99 {ms[Measured * 99 / 100]:0.00} ms, largest {ms[^1]:0.0} ms");
 
+        double[] sync = Sync(Path.Combine(Path.GetDirectoryName(Path.GetFullPath(path))!, "sync.tmp"));
+        Say($"the disk's own part of it, 8 kB written and made durable: median {sync[sync.Length / 2]:0.00} ms, p99 {sync[sync.Length * 99 / 100]:0.00} ms, largest {sync[^1]:0.0} ms");
+
+        long longest = Look(path, watch);
+        Commands(path, longest);
+        return 0;
+    }
+
+    /// <summary>The queries and the analysis by themselves, in this process.</summary>
+    private static long Look(string path, Stopwatch watch)
+    {
         watch.Restart();
         using RecordReader reader = RecordReader.Open(path);
         IReadOnlyList<RunSummary> runs = reader.Runs(new HistoryQuery());
@@ -35,10 +46,54 @@ internal static class SpeedTrial
         watch.Restart();
         long longest = runs.MaxBy(run => run.Count)!.Number;
         DriftSeries series = DriftSeries.Of(reader.Track(longest).Select(p => new DriftPoint(p.TimeS, p.F0Hz, p.F0RepeatabilityHz, p.TemperatureC)));
+        Report("read for drift", watch, $"{series.Count} readings");
+        watch.Restart();
         DriftAnalysis analysis = DriftAnalysis.Of(series, new DriftOptions { WindowHalfWidth = 60 });
-        using Process self = Process.GetCurrentProcess();
-        Report("drift", watch, $"{series.Count} readings, {analysis.Settling.State}, peak memory of all of this {self.PeakWorkingSet64 >> 20} MB");
-        return 0;
+        Report("drift of these", watch, $"{analysis.Settling.State}");
+        return longest;
+    }
+
+    /// <summary>The program's own commands, each in a process of its own: its start and all of its memory are in the figures.</summary>
+    private static void Commands(string path, long longest)
+    {
+        if (ProgramUnderTest.Find() is not { } program)
+        {
+            Console.WriteLine("history and drift as commands: build host/Looseloop in this configuration first");
+            return;
+        }
+
+        string run = longest.ToString(CultureInfo.InvariantCulture);
+        foreach (string[] command in new[] { new[] { "history" }, ["history", "--readings"], ["drift", run, "--window", "60Hz"], ["drift", run, "--json"] })
+        {
+            // The first start reads the program itself from the disk.
+            program.Run([.. command, "--record", path]);
+            ProgramRun done = program.Run([.. command, "--record", path]);
+            Say($"command {string.Join(' ', command)}: {done.Seconds:0.00} s, peak memory {done.PeakBytes >> 20} MB, exit code {done.ExitCode}");
+        }
+    }
+
+    private static double[] Sync(string path)
+    {
+        double[] ms = new double[Measured / 5];
+        byte[] page = new byte[8192];
+        try
+        {
+            using FileStream file = new(path, FileMode.Create, FileAccess.Write, FileShare.None, 0);
+            for (int n = 0; n < ms.Length; n++)
+            {
+                long begin = Stopwatch.GetTimestamp();
+                file.Write(page);
+                file.Flush(flushToDisk: true);
+                ms[n] = Stopwatch.GetElapsedTime(begin).TotalMilliseconds;
+            }
+        }
+        finally
+        {
+            File.Delete(path);
+        }
+
+        Array.Sort(ms);
+        return ms;
     }
 
     private static void Fill(string path, int count)
