@@ -51,8 +51,11 @@ public sealed record FitBasis
     /// <summary>The points taken again after a longer dwell.</summary>
     public required IReadOnlyList<RawPoint> AfterLongerDwell { get; init; }
 
-    /// <summary>Points that could not be had.</summary>
-    public int Missing { get; init; }
+    /// <summary>Points of the fit that could not be had.</summary>
+    public int MissingInSweep { get; init; }
+
+    /// <summary>Points at the other duty or after the longer dwell that could not be had.</summary>
+    public int MissingInChecks { get; init; }
 
     /// <summary>True if even the lowest duty left the converter at its upper end.</summary>
     public bool Saturated { get; init; }

@@ -36,7 +36,8 @@ internal static class BasisJson
         json.WriteNumber("samples", basis.Samples);
         json.WriteNumber("spacing_us", basis.SpacingUs);
         ReadingJson.Number(json, "other_duty", basis.OtherDuty);
-        json.WriteNumber("missing", basis.Missing);
+        json.WriteNumber("missing_in_sweep", basis.MissingInSweep);
+        json.WriteNumber("missing_in_checks", basis.MissingInChecks);
         json.WriteBoolean("saturated", basis.Saturated);
         Array(json, "harmonics", basis.Harmonics, value => json.WriteNumberValue(value));
         Array(json, "neighbours_hz", basis.NeighboursHz, value => json.WriteNumberValue(value));
@@ -58,7 +59,8 @@ internal static class BasisJson
         Samples = json.GetProperty("samples").GetInt32(),
         SpacingUs = json.GetProperty("spacing_us").GetInt32(),
         OtherDuty = FactJson.Figure(json, "other_duty"),
-        Missing = json.GetProperty("missing").GetInt32(),
+        MissingInSweep = json.GetProperty("missing_in_sweep").GetInt32(),
+        MissingInChecks = json.GetProperty("missing_in_checks").GetInt32(),
         Saturated = json.GetProperty("saturated").GetBoolean(),
         Harmonics = [.. json.GetProperty("harmonics").EnumerateArray().Select(value => value.GetInt32())],
         NeighboursHz = [.. json.GetProperty("neighbours_hz").EnumerateArray().Select(value => value.GetDouble())],

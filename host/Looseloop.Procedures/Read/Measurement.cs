@@ -60,6 +60,9 @@ public sealed record Measurement
     /// <summary>Points that could not be had.</summary>
     public int Missing { get; init; }
 
+    /// <summary>Those of them that the fit itself lacks.</summary>
+    public int MissingInSweep { get; init; }
+
     /// <summary>True if even the lowest duty left the converter at its upper end.</summary>
     public bool Saturated { get; init; }
 

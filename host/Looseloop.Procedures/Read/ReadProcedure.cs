@@ -144,6 +144,7 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             DarkBefore = before,
             DarkAfter = after,
             Missing = sweep.Missing + other.Missing + longer.Missing,
+            MissingInSweep = sweep.Missing,
             Saturated = taken.Saturated,
         };
     }
