@@ -10,6 +10,10 @@ namespace Looseloop.Firmware
         private const int MostAtOnce = 128;
         private const int ClockEvery = 8;
 
+        // Evenly spaced samples take a carrier that beats near a multiple of their rate for a level. So they wander: from one to
+        // the next by up to 307/1024 of the spacing or of a millisecond, never by more than two spacings in all.
+        private const int WidestSpacingUs = 1000;
+
         private readonly IPickup _pickup;
         private readonly SteadyClock _clock;
         private readonly int _fullCounts;
@@ -18,6 +22,9 @@ namespace Looseloop.Firmware
         private int _spacingUs;
         private long _durationUs;
         private long _endUs;
+        private int _wanderUs;
+        private int _offsetUs;
+        private int _random = 1;
 
         public Sampler(IPickup pickup, SteadyClock clock, int fullCounts)
         {
@@ -112,6 +119,8 @@ namespace Looseloop.Firmware
             _wanted = samples;
             _spacingUs = spacingUs;
             _durationUs = durationUs;
+            _wanderUs = (spacingUs < WidestSpacingUs ? spacingUs : WidestSpacingUs) * 307 >> 10;
+            _offsetUs = 0;
             Samples = 0;
             Sum = 0;
             Squares = 0;
@@ -186,7 +195,7 @@ namespace Looseloop.Firmware
         {
             for (int taken = 0; taken < MostAtOnce && Samples < _wanted; taken++)
             {
-                long dueUs = FromUs + (long)Samples * _spacingUs;
+                long dueUs = FromUs + (long)Samples * _spacingUs + _offsetUs;
                 if (dueUs > untilUs || dueUs >= _endUs)
                 {
                     _clock.WaitUntilUs(untilUs);
@@ -208,7 +217,17 @@ namespace Looseloop.Firmware
                 }
 
                 Samples++;
+                Wander();
             }
+        }
+
+        private void Wander()
+        {
+            // A linear congruence of 16 bits: cheap in the interpreter, and of no other use.
+            _random = (_random * 25173 + 13849) & 0xFFFF;
+            int step = (_random * (2 * _wanderUs + 1) >> 16) - _wanderUs;
+            int offset = _offsetUs + step;
+            _offsetUs = offset > 2 * _spacingUs || offset < -2 * _spacingUs ? _offsetUs - step : offset;
         }
     }
 }

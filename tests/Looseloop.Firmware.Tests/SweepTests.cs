@@ -104,6 +104,27 @@ public class SweepTests
         }
     }
 
+    // A beat of 300 counts at exactly the rate of the samples, in ten phases: even spacing would read each phase as a level, 212
+    // counts (300 over root 2) root mean square; 100 independent samples leave 21.
+    [Fact]
+    public void A_beat_at_the_rate_of_the_samples_is_no_level()
+    {
+        _host.Board.ReadCostUs = 1;
+        _host.PlanRun(1);
+        double squares = 0;
+        for (int phase = 0; phase < 10; phase++)
+        {
+            double angle = phase * 0.2 * Math.PI;
+            _host.Board.Level = (board, _) => 400 + (int)Math.Round(board.IsDriving ? 300 * Math.Sin((2 * Math.PI * board.TimeUs / 200) + angle) : 0);
+            BoxLine point = _host.Ask("sweep 1000 100 200 0 0 0").Single(line => line.Word == "point");
+            double level = (point[5] / (double)point[4]) - 400;
+            squares += level * level / 10;
+            Assert.Equal(100, point[4]);
+        }
+
+        Assert.InRange(Math.Sqrt(squares), 0, 3 * 21);
+    }
+
     [Theory]
     [InlineData("sweep 2000000 2 0 0 0 0")]
     [InlineData("sweep 0 16384 0 0 0 0")]
