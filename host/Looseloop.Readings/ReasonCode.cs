@@ -93,6 +93,9 @@ public enum ReasonCode
     /// <summary>What stands with the coil was not stated.</summary>
     SetUpNotStated,
 
+    /// <summary>Lower frequencies were not looked at: an overtone would be read as f0.</summary>
+    NotSurveyed,
+
     /// <summary>The scatter was taken from the fit's residuals, for want of any other.</summary>
     NoiseFromResiduals,
 }

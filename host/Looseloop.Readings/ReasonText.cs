@@ -48,6 +48,7 @@ public static class ReasonText
         ReasonCode.NotCommissioned => (Verdict.Sound, "Commission the box once."),
         ReasonCode.PullNotMeasured => (Verdict.Sound, "Take a standoff once for this coil and set-up, and read again after moving the cable."),
         ReasonCode.SetUpNotStated => (Verdict.Sound, "State what stands with the coil."),
+        ReasonCode.NotSurveyed => (Verdict.Sound, "Read once without --near over the whole range where the coil is not known."),
         ReasonCode.NoiseFromResiduals => (Verdict.Sound, "Give a column of uncertainties where they are known."),
         _ => throw new ArgumentOutOfRangeException(nameof(code), code, "a reason without a text"),
     };

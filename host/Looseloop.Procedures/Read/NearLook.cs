@@ -46,10 +46,11 @@ public static class NearLook
             .. _lookalikes.Select(order => order * finding.High.FrequencyHz).Where(hz => hz < box.Identity.HighestHz)
                 .Select(hz => CloseLook.Run(box, maker, hz, cancel)),
         ];
-        Response named = ResponseNaming.Name([finding, .. sources]).First(response => response.FrequencyHz == finding.High.FrequencyHz);
+        Response named = ResponseNaming.Name([finding, .. sources], law.HighExtraS).First(response => response.FrequencyHz == finding.High.FrequencyHz);
 
         // Sources stand above it, so a real response here is the lowest; only its strength may say otherwise.
-        return new Result(named.Harmonic == 1 ? named with { Kind = ResponseKind.F0 } : named, look, raw);
+        bool real = named.Harmonic == 1 || SourceLook.IsReal(box, maker, named, cancel);
+        return new Result(real ? named with { Kind = ResponseKind.F0, Harmonic = 1 } : named, look, raw);
     }
 
     /// <summary>

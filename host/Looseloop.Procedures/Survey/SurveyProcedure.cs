@@ -37,8 +37,9 @@ public static class SurveyProcedure
             watch.Progress((double)++looked / maxima.Count);
         }
 
+        IReadOnlyList<Response> named = SourceLook.Settle(box, maker, ResponseNaming.Name(findings, law.HighExtraS), cancel);
         bool saturated = raw.Any(point => point.Max > SaturatedShare * box.Identity.FullCounts);
-        return new SurveyResult(raw, points, look, ResponseNaming.Name(findings), maxima.Count > 0 && maxima[0].AtEdge, saturated);
+        return new SurveyResult(raw, points, look, named, maxima.Count > 0 && maxima[0].AtEdge, saturated);
     }
 
     /// <summary>
