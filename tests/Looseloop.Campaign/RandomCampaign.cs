@@ -10,6 +10,7 @@ namespace Looseloop.Campaign;
 public static class RandomCampaign
 {
     private const int RepeatsOfSound = 4;
+    private const ulong LadderSeed = 77;
 
     /// <summary>Repeatability is looked at in one world of this many: it costs four more readings.</summary>
     private const int RepeatEvery = 4;
@@ -104,7 +105,14 @@ public static class RandomCampaign
         }
     }
 
-    internal static ReadOptions Read(ReadOptions options, RandomWorld.Drawn drawn) => drawn.LadderRead
-        ? options with { Law = options.Law with { ReadOn = DateTimeOffset.UnixEpoch, ShapeUncertainty = options.Law.Shape * 0.003 } }
-        : options;
+    /// <summary>
+    /// What a ladder would have found, without the time that it takes; where the drive's edges or the converter are what is
+    /// wrong, the ladder itself.
+    /// </summary>
+    internal static ReadOptions Read(ReadOptions options, RandomWorld.Drawn drawn) => drawn switch
+    {
+        { LadderRead: false } => options,
+        { Defect: Defect.UnevenEdges or Defect.BentConverter } => options with { Law = BenchReading.Ladder(drawn.World, LadderSeed) },
+        _ => options with { Law = options.Law with { ReadOn = DateTimeOffset.UnixEpoch, ShapeUncertainty = options.Law.Shape * 0.003 } },
+    };
 }
