@@ -34,7 +34,7 @@ public static class CurveSweep
     /// <param name="harmonics">Which harmonic each setting uses; null for all fundamental.</param>
     public static FitPoint[] FitPoints(
         IEnumerable<RawPoint> raw, AmplitudeMaker maker, IReadOnlyDictionary<Setting, int>? harmonics = null) =>
-        [.. raw.Select(point => FitPointOf(maker.Make(point), harmonics?[point.Setting] ?? 1))];
+        [.. PooledNoise.Make(raw, maker).Select(made => FitPointOf(made, harmonics?[made.Raw.Setting] ?? 1))];
 
     private static FitPoint FitPointOf(AmplitudePoint made, int harmonic)
     {

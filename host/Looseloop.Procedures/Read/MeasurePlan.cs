@@ -23,6 +23,13 @@ public sealed record MeasurePlan(
     /// <summary>What a point costs beside dwell and samples: the timer, and its line of text.</summary>
     private const double PointS = 0.006;
 
+    /// <summary>
+    /// Seven ring times leave a thousandth of the step before, which two ways of low noise tell apart; where the ring is short
+    /// beside the samples, up to three more cost next to nothing.
+    /// </summary>
+    private const double MostMoreRings = 3;
+    private const double CheapShare = 0.08;
+
     /// <summary>Vernier settings are driven at this duty, where the third and fifth harmonics are strongest.</summary>
     private const double VernierDuty = 0.5;
 
@@ -43,6 +50,8 @@ public sealed record MeasurePlan(
     private const double Doubting = 2.6;
     private const int MostDoubting = 13;
 
+    private const double LeastDoubt = 1 / 32.0;
+
     /// <summary>Below this duty the level was too high for the converter; a vernier at 1/2 might be again.</summary>
     private const double LeastDutyForVernier = 0.3;
 
@@ -60,17 +69,19 @@ public sealed record MeasurePlan(
     /// <param name="mainsHz">Mains frequency, hertz.</param>
     public static MeasurePlan For(BoxSession box, TargetSearch.Result search, AmplitudeMaker maker, double mainsHz)
     {
-        Target target = search.Target!;
+        Target target = RoundedEstimate.Of(search.Target!);
         DetectorLaw law = maker.Scale.Law;
         int spacingUs = (int)Math.Round(1e6 / mainsHz / SamplesAMainsPeriod);
-        int dwellUs = CurveSweep.DwellUs(target, law);
+        double tauUs = 1e6 * (target.RingTimeS + law.TimeConstantS);
+        double moreRings = Math.Min(MostMoreRings, CheapShare * SamplesAMainsPeriod * spacingUs / tauUs);
+        int dwellUs = CurveSweep.DwellUs(target, law, CurveSweep.RingsInOrder + moreRings);
         bool vernier = law.RespondsToPower && target.Duty >= LeastDutyForVernier;
         double visitS = (2e-6 * (dwellUs + (SamplesAMainsPeriod * spacingUs))) + (2 * PointS);
         var request = new PlanRequest
         {
-            Estimate = CurveEstimate.From(search.Fit),
-            F0StandardHz = Math.Min(search.Fit.F0StandardHz, target.BandwidthHz / 3),
-            QRelativeStandard = Math.Min(search.Fit.QRelativeStandard, 0.3),
+            Estimate = RoundedEstimate.Of(target, search.Fit),
+            F0StandardHz = target.BandwidthHz * Doubt(search.Fit.F0StandardHz / target.BandwidthHz, 1 / 3.0),
+            QRelativeStandard = Doubt(search.Fit.QRelativeStandard, 0.3),
             Noise = NoiseOf(search, maker),
             Fundamental = Around(box, target, 1, target.Duty),
             Third = vernier ? Around(box, target, 3, VernierDuty) : [],
@@ -87,6 +98,10 @@ public sealed record MeasurePlan(
             ? Even(box, target, dwellUs, spacingUs)
             : Of(box, target, designed, dwellUs, spacingUs);
     }
+
+    /// <summary>A doubt of the estimate in powers of two, and not below what rounding has added.</summary>
+    private static double Doubt(double standard, double most) =>
+        Math.Min(RoundedEstimate.Geometric(Math.Max(standard, LeastDoubt), 2), most);
 
     private static double Reach(Target target) => Math.Clamp(ReachShare * target.Q, LeastReach, MostReach);
 
@@ -158,9 +173,9 @@ public sealed record MeasurePlan(
     private static NoiseLaw NoiseOf(TargetSearch.Result search, AmplitudeMaker maker)
     {
         double[] variances = [.. search.Points.Select(point => point.SampleVariance).Where(double.IsFinite).Order()];
-        double sigma = variances.Length == 0 ? 1 : Math.Sqrt(variances[variances.Length / 2]);
+        double sigma = RoundedEstimate.Geometric(variances.Length == 0 ? 1 : Math.Max(Math.Sqrt(variances[variances.Length / 2]), 0.1), 1.5);
         DetectorLaw law = maker.Scale.Law;
-        double peak = Math.Sqrt(search.Fit.PeakPower);
+        double peak = RoundedEstimate.Geometric(Math.Sqrt(search.Fit.PeakPower), 1.25);
         double rawAtPeak = maker.Scale.Counts(peak);
         double amplitudeSigma = sigma * maker.Scale.Slope(rawAtPeak);
         return law.Kind switch

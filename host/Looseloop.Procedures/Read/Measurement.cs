@@ -1,5 +1,6 @@
 using Looseloop.Procedures.Detector;
 using Looseloop.Procedures.Survey;
+using Looseloop.Procedures.Uncertainty;
 using Looseloop.Readings;
 using Looseloop.Resonance;
 
@@ -37,6 +38,9 @@ public sealed record Measurement
 
     /// <inheritdoc cref="There"/>
     public required ResonanceFit Back { get; init; }
+
+    /// <summary>How the points of the two ways differ.</summary>
+    public required PairScatter Pairs { get; init; }
 
     /// <summary>The same settings at another duty, and their fit.</summary>
     public required ResonanceFit OtherDutyFit { get; init; }

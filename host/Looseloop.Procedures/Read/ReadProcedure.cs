@@ -2,6 +2,7 @@ using Looseloop.Box;
 using Looseloop.Procedures.Checks;
 using Looseloop.Procedures.Detector;
 using Looseloop.Procedures.Survey;
+using Looseloop.Procedures.Uncertainty;
 using Looseloop.Readings;
 using Looseloop.Resonance;
 
@@ -122,6 +123,13 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
         ResonanceFit fit = fitter.Fit(points, declared);
         double[] residuals = fitter.NormalizedResiduals.ToArray();
         int half = points.Length / 2;
+        ResonanceFit there = fitter.Fit(points.AsSpan(0, half), declared);
+        double[] wayResiduals = there.IsFitted ? fitter.NormalizedResiduals.ToArray() : [];
+        ResonanceFit back = fitter.Fit(points.AsSpan(half), declared);
+        bool paired = there.IsFitted && back.IsFitted && sweep.Missing == 0;
+        PairScatter scatter = paired
+            ? PairScatter.Of(points, [.. wayResiduals, .. fitter.NormalizedResiduals], fit, half - there.DegreesOfFreedom)
+            : PairScatter.Unknown;
         return new Measurement
         {
             Options = options,
@@ -134,8 +142,9 @@ public sealed class ReadProcedure(BoxSession box, ReadOptions options, IWatch wa
             FitPoints = points,
             Fit = fit,
             Residuals = residuals,
-            There = fitter.Fit(points.AsSpan(0, half), declared),
-            Back = fitter.Fit(points.AsSpan(half), declared),
+            There = there,
+            Back = back,
+            Pairs = scatter,
             OtherDutyFit = fitter.Fit(CurveSweep.FitPoints(other.Points, maker), declared),
             OtherDuty = taken.OtherDuty,
             AtOtherDuty = other.Points,

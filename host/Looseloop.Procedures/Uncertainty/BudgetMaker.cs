@@ -42,10 +42,10 @@ public static class BudgetMaker
     {
         ResonanceFit fit = m.Fit;
         double root3 = Math.Sqrt(3);
-        double inflation = fit.ChiSquareProbability < 1e-3 ? Math.Sqrt(fit.SumOfSquares / fit.DegreesOfFreedom) : 1;
         var lines = new List<BudgetLine>
         {
-            new("noise", fit.F0StandardHz * inflation, fit.QRelativeStandard * inflation, true, fit.DegreesOfFreedom, "fit covariance from the samples' own scatter"),
+            Noise(m),
+            Misfit(m),
             Drift(m),
             Dark(m),
             Law(m, root3),
@@ -68,6 +68,34 @@ public static class BudgetMaker
             : new("pull", fit.F0Hz * UnmeasuredPull / root3, UnmeasuredCoupling * UnmeasuredCoupling / 2 * fit.Q / root3, false, double.PositiveInfinity, "no standoff: up to 0.1 pF, loop up to k = 0.02"));
         lines.Add(new("temperature", fit.F0Hz * F0PpmPerK * 1e-6 * TemperatureK, QPerK * TemperatureK, false, double.PositiveInfinity, "+-0.5 K of coil and room"));
         return new Budget(lines);
+    }
+
+    /// <summary>The fit's covariance from the samples' own scatter and from what the way back reads otherwise.</summary>
+    private static BudgetLine Noise(Measurement m)
+    {
+        (double f0, double q) = Excesses(m);
+        double freedom = double.IsNaN(m.Pairs.F0.Variance) ? m.Fit.DegreesOfFreedom : Math.Min(m.Pairs.F0.BelievedFreedom, m.Pairs.Q.BelievedFreedom);
+        string origin = FormattableString.Invariant(
+            $"samples' scatter, and the way back: {Math.Sqrt(f0):0.00} times the former for f0, {Math.Sqrt(q):0.00} for Q");
+        return new("noise", m.Fit.Noise.F0Hz * Math.Sqrt(f0), m.Fit.Noise.Q / m.Fit.Q * Math.Sqrt(q), true, freedom, origin);
+    }
+
+    /// <summary>What is left about the curve beyond what the way back repeats otherwise: the same in every reading.</summary>
+    private static BudgetLine Misfit(Measurement m)
+    {
+        double chi = m.Fit.ChiSquareProbability < 1e-3 ? m.Fit.SumOfSquares / m.Fit.DegreesOfFreedom : 0;
+        double all = Math.Max(chi, m.Fit.RobustScale * m.Fit.RobustScale);
+        (double f0, double q) = Excesses(m);
+        return new(
+            "misfit", m.Fit.Noise.F0Hz * Math.Sqrt(Math.Max(all - f0, 0)), m.Fit.Noise.Q / m.Fit.Q * Math.Sqrt(Math.Max(all - q, 0)), false,
+            m.Fit.DegreesOfFreedom, "scatter about the curve that the way back repeats");
+    }
+
+    /// <summary>Variances by both over what the samples say; by the curve's scatter where no pairs tell.</summary>
+    private static (double F0, double Q) Excesses(Measurement m)
+    {
+        double curve = Math.Max(m.Fit.SumOfSquares / m.Fit.DegreesOfFreedom, 1);
+        return double.IsNaN(m.Pairs.F0.Variance) ? (curve, curve) : (m.Pairs.F0.Believed, m.Pairs.Q.Believed);
     }
 
     private static BudgetLine Drift(Measurement m)

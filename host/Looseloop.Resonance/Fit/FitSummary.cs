@@ -4,7 +4,7 @@ namespace Looseloop.Resonance;
 internal static class FitSummary
 {
     public static ResonanceFit Make(
-        FitData data, ReadOnlySpan<double> best, bool determined, ReadOnlySpan<double> covariance, double sum, double inflation,
+        FitData data, ReadOnlySpan<double> best, bool determined, ReadOnlySpan<double> covariance, double sum, double inflation, double robustScale,
         int iterations, Span<double> normalized, in FitOptions options, double leastEvidence, ReadOnlySpan<double> residuals)
     {
         int parameters = data.ParameterCount;
@@ -50,6 +50,8 @@ internal static class FitSummary
             Q = q,
             Stated = one.Scaled(stated),
             Scatter = one.Scaled(fromScatter),
+            Noise = one.Scaled(data.VariancesStated ? stated / (robustScale * robustScale) : double.NaN),
+            RobustScale = robustScale,
             VariancesStated = data.VariancesStated,
             SumOfSquares = sum * data.UnknownSigma * data.UnknownSigma,
             DegreesOfFreedom = freedom,

@@ -33,6 +33,15 @@ public readonly record struct ResonanceFit()
     public ParameterCovariance Covariance =>
         !VariancesStated || (ChiSquareProbability < 0.01 && Scatter.F0Hz2 > Stated.F0Hz2) ? Scatter : Stated;
 
+    /// <summary>
+    /// Covariance that noise of the stated variances alone would make: what the points scatter beyond it is left out. NaN
+    /// without stated variances.
+    /// </summary>
+    public ParameterCovariance Noise { get; init; } = ParameterCovariance.Unknown;
+
+    /// <summary>Scale of the residuals that the robust weights were made with, standard deviations, 1 or more.</summary>
+    public double RobustScale { get; init; } = 1;
+
     /// <summary>Standard uncertainty of f0, hertz, by <see cref="Covariance"/>.</summary>
     public double F0StandardHz => Covariance.F0Hz;
 

@@ -55,7 +55,7 @@ public sealed partial class ResonanceFitter
     /// Iterated reweighting from the kept end, Huber's loss first. Returns the factor on the covariance: scale^2 times
     /// mean psi^2 / (mean psi')^2 (P. J. Huber, Robust Statistics, 1981, 7.6).
     /// </summary>
-    private double FinishRobust(RobustLoss loss, out double sum)
+    private double FinishRobust(RobustLoss loss, out double sum, out double scale)
     {
         Span<double> root = _data.RobustRoot.AsSpan(0, _data.Count);
         root.Fill(1);
@@ -79,7 +79,7 @@ public sealed partial class ResonanceFitter
             }
         }
 
-        double scale = RawScale(root);
+        scale = RawScale(root);
         double psi2 = 0;
         double slope = 0;
         double weights = 0;

@@ -100,14 +100,15 @@ public sealed partial class ResonanceFitter
             return new ResonanceFit { Outcome = FitOutcome.NoPeak };
         }
 
-        double inflation = robust ? FinishRobust(options.Loss, out sum) : 1;
+        double robustScale = 1;
+        double inflation = robust ? FinishRobust(options.Loss, out sum, out robustScale) : 1;
         if (!robust)
         {
             sum = Minimise(_best);
         }
 
         return FitSummary.Make(
-            _data, _best, _minimiser.TryCovariance(_covariance), _covariance, sum, inflation, _iterations, _scratch, options,
+            _data, _best, _minimiser.TryCovariance(_covariance), _covariance, sum, inflation, robustScale, _iterations, _scratch, options,
             LeastEvidence, _minimiser.Residuals);
     }
 

@@ -26,17 +26,25 @@ public class LogEndTests
     [Fact]
     public void A_warm_up_ends_when_it_is_settled()
     {
-        // f0 moves by 75 Hz with 300 s: within .3 Hz after 5.5 time constants, and no sooner than after 4.
+        // f0 moves by 75 Hz with 300 s: within .3 Hz after 5.5 time constants, and no sooner than after 4. How much later it is
+        // said depends on the noise; the middle of three logs counts.
         World world = BenchTracking.World(warmUp: new WarmUp { StartPpm = 500, TimeS = 300 });
-        using var socket = new BenchSocket(world, 1);
-        var sink = new MemorySink();
-        LogOptions options = LogRun.Options(socket.Time, TimeSpan.FromHours(3), TimeSpan.FromSeconds(10)) with { UntilSettled = true };
-        LogSummary summary = LogRun.Run(socket, sink, new TestWatch(), options);
-        Assert.Equal(RunStatus.Completed, summary.Stop.Status);
-        Assert.Equal(SettledState.Settled, summary.Settling!.State);
-        Assert.InRange(summary.State.ElapsedS, 4 * 300, 3600);
-        double still = Truth.Loaded(world, 1e6).F0Hz - Truth.Loaded(world, socket.Seconds).F0Hz;
-        Assert.True(Math.Abs(still) < 2 * sink.Readings[^1].Budget.F0Hz(absolute: false), $"{still:0.00} Hz are still to come");
+        var elapsedS = new List<double>();
+        for (ulong seed = 1; seed <= 3; seed++)
+        {
+            using var socket = new BenchSocket(world, seed);
+            var sink = new MemorySink();
+            LogOptions options = LogRun.Options(socket.Time, TimeSpan.FromHours(3), TimeSpan.FromSeconds(10)) with { UntilSettled = true };
+            LogSummary summary = LogRun.Run(socket, sink, new TestWatch(), options);
+            Assert.Equal(RunStatus.Completed, summary.Stop.Status);
+            Assert.Equal(SettledState.Settled, summary.Settling!.State);
+            Assert.True(summary.State.ElapsedS > 4 * 300);
+            elapsedS.Add(summary.State.ElapsedS);
+            double still = Truth.Loaded(world, 1e6).F0Hz - Truth.Loaded(world, socket.Seconds).F0Hz;
+            Assert.True(Math.Abs(still) < 2 * sink.Readings[^1].Budget.F0Hz(absolute: false), $"{still:0.00} Hz are still to come");
+        }
+
+        Assert.InRange(elapsedS.Order().ElementAt(1), 4 * 300, 3600);
     }
 
     [Fact]
