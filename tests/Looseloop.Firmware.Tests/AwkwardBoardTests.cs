@@ -5,8 +5,10 @@ namespace Looseloop.Firmware.Tests;
 
 /// <summary>
 /// A second pair of eyes: the box on a board with the runtime's habits switched on. The loop sleeps 10 ms whenever it is idle, a
-/// receive hands over a few bytes at a time, the ring holds 256 bytes and is flushed when it overflows, a change of frequency
-/// cuts a period of the drive, and the converter is slow.
+/// receive hands over a few bytes at a time, the ring holds 256 bytes and is flushed when it overflows, a line is written in
+/// pieces of 128 bytes each of which returns a tick of the scheduler late, a change of frequency cuts a period of the drive, and
+/// the converter is slow. That a division by zero throws, of doubles too, is seen to by <see cref="DivisionTests"/>; what reads
+/// back of a frequency is the request, so that only the timer's own arithmetic says what is driven.
 /// </summary>
 public class AwkwardBoardTests
 {
@@ -18,6 +20,8 @@ public class AwkwardBoardTests
         _host.Board.MostPerReceive = 7;
         _host.Board.ReadCostUs = 450;
         _host.Board.SetCostUs = 3000;
+        _host.Board.BytesPerPiece = 128;
+        _host.Board.PieceLateUs = 10000;
         _host.Board.BeforeSet = board => _changedUs = board.TimeUs + board.SetCostUs;
         _host.Board.Level = (board, _) => !board.IsDriving || board.TimeUs - _changedUs < 1e6 / board.DriveHz ? 400 : Curve(board.DriveHz);
     }
@@ -76,6 +80,97 @@ public class AwkwardBoardTests
         Assert.Equal(sent, lines.Count(said => said.Word == "fault" && said[0] == FaultCode.Busy));
         Assert.DoesNotContain(lines, said => said.Word == "fault" && said[0] != FaultCode.Busy);
         Assert.Contains(lines, said => said.Word == "done" && said.Request == sweep);
+    }
+
+    [Theory]
+    [InlineData(FrequencyGrid.Esp32DutyBits)]
+    [InlineData(13)]
+    public void What_the_timer_makes_of_each_request_is_the_setting_that_is_reported(int mostBits)
+    {
+        var host = new TestHost(profile: new BoxProfile("test-board", 77, mostBits));
+        foreach ((int bits, int first, int count) in new[] { (11, 325, 68), (10, 512, 256), (9, 512, 256), (8, 512, 256), (7, 512, 247) })
+        {
+            foreach (int share in new[] { 2, 3, 5, 16 })
+            {
+                host.Ok("plan");
+                host.Ok(string.Create(System.Globalization.CultureInfo.InvariantCulture, $"run {bits} {first} -1 {count} {(1 << bits) / share}"));
+                host.Board.Settings.Clear();
+                BoxLine[] points = [.. host.Ask("sweep 0 1 0 0 0 0").Where(line => line.Word == "point")];
+                Assert.Equal(count, points.Length);
+                Assert.Equal(
+                    host.Board.Settings.Select(asked => RuntimeTimer.Of(asked.RequestHz, asked.Duty, mostBits)),
+                    points.Select(point => new RuntimeTimer((int)point[1], point[2], point[3])));
+            }
+        }
+    }
+
+    [Fact]
+    public void Lines_in_late_pieces_leave_no_gap_of_50_ms_on_the_wire()
+    {
+        // The drive stage's enable lives on these edges (hardware-notes/enable.md). Packs of 12 are the longest lines.
+        _host.PlanRun(200, 500);
+        _host.Board.PiecesGoneUs.Clear();
+        List<BoxLine> lines = _host.Ask("sweep 60000 16 0 0 12 0", 60000);
+        Assert.Contains(lines, line => line.Word == "pack" && string.Join(' ', line.Fields).Length > 128);
+        long[] gone = [.. _host.Board.PiecesGoneUs];
+        long[] gaps = [.. gone.Zip(gone.Skip(1), (a, b) => b - a)];
+        Assert.InRange(gaps.Max(), 0, 50000);
+    }
+
+    [Fact]
+    public void An_overflow_loses_lines_but_never_makes_another_of_two_halves()
+    {
+        // Each line asks for a duty of its own: an answer that belongs to none of them, or a plan that holds more than what
+        // was answered, would come of two halves.
+        _host.Board.ByteUs = 1;
+        _host.Ok("plan");
+        int first = _host.Request + 1;
+        for (int i = 0; i < 40; i++)
+        {
+            _host.Type($"list 9 267 {100 + i} 9 300 {200 + i}");
+        }
+
+        int last = _host.Request;
+        _host.RunFor(3000);
+        Assert.True(_host.Board.Flushes > 0);
+        List<BoxLine> lines = _host.Take();
+        BoxLine[] planned = [.. lines.Where(line => line.Word == "planned")];
+        Assert.All(planned, line => Assert.InRange(line.Request, first, last));
+        Assert.True(planned.Length < last - first + 1);
+        Assert.Equal(planned.Select((_, i) => 2L * (i + 1)), planned.Select(line => line[0]));
+        Assert.All(lines.Except(planned), line => Assert.True(line.Word == "fault" && line[0] is FaultCode.UnreadableLine or FaultCode.LineTooLong));
+
+        // The rest of a torn line may take one more with it; the host repeats what is not answered.
+        _host.Type("identify");
+        _host.RunFor(200);
+        if (!_host.Take().Any(line => line.Word == "box"))
+        {
+            _host.Type("identify");
+            _host.RunFor(200);
+            Assert.Contains(_host.Take(), line => line.Word == "box");
+        }
+
+        _host.Board.Settings.Clear();
+        BoxLine[] points = [.. _host.Ask("sweep 0 1 0 0 0 0").Where(line => line.Word == "point")];
+        Assert.Equal(2 * planned.Length, points.Length);
+        Assert.Equal(
+            planned.SelectMany(line => new long[] { 100 + line.Request - first, 200 + line.Request - first }), points.Select(point => point[3]));
+    }
+
+    [Fact]
+    public void An_idle_box_that_sleeps_in_ticks_answers_within_two_of_them()
+    {
+        _host.Board.MostPerReceive = int.MaxValue;
+        foreach (string request in new[] { "identify", "limits", "plan", "run 9 300 -1 20 256", "halt" })
+        {
+            long typed = _host.Board.TimeUs;
+            int length = TestHost.WithChecksum($">{_host.Request + 1} {request}").Length + 1;
+            _host.Type(request);
+            _host.RunFor(60);
+            BoxLine answer = Assert.Single(_host.Take());
+            double wireUs = (length + answer.ToString().Length + 20) * _host.Board.ByteUs;
+            Assert.InRange(answer.TimeUs - typed, 0, wireUs + (2 * _host.IdleUs));
+        }
     }
 
     private static int Curve(double hz)

@@ -38,6 +38,18 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
     /// <summary>Most bytes handed over by one receive.</summary>
     public int MostPerReceive { get; set; } = int.MaxValue;
 
+    /// <summary>Most bytes written at once: a longer line goes in pieces.</summary>
+    public int BytesPerPiece { get; set; } = int.MaxValue;
+
+    /// <summary>How long each piece's write returns after its last byte has gone, µs.</summary>
+    public int PieceLateUs { get; set; }
+
+    /// <summary>When the bytes of each piece were gone, µs.</summary>
+    public List<long> PiecesGoneUs { get; } = [];
+
+    /// <summary>How often the receive ring overflowed and was flushed.</summary>
+    public int Flushes { get; private set; }
+
     /// <summary>The level of an input now, raw counts.</summary>
     public Func<TestBoard, int, int> Level { get; set; } = (_, _) => 400;
 
@@ -169,6 +181,7 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
             if (_ring.Count == RingBytes)
             {
                 _ring.Clear();
+                Flushes++;
             }
 
             _ring.Enqueue(next.Value);
@@ -186,7 +199,22 @@ internal sealed class TestBoard : IExcitation, IPickup, IClock, ILink
     public void Send(byte[] buffer, int count)
     {
         BeforeSend?.Invoke(this);
-        TimeUs += (long)(count * ByteUs);
+        for (int sent = 0; sent < count; sent += BytesPerPiece)
+        {
+            int piece = Math.Min(BytesPerPiece, count - sent);
+            TimeUs += (long)(piece * ByteUs);
+            if (!Forgetful)
+            {
+                PiecesGoneUs.Add(TimeUs);
+            }
+
+            TimeUs += PieceLateUs;
+            if (piece == count - sent)
+            {
+                break;
+            }
+        }
+
         SentBytes += count;
         SentLines++;
         for (int i = 0; i < count && !Forgetful; i++)
