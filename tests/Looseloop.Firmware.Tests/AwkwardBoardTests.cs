@@ -122,10 +122,12 @@ public class AwkwardBoardTests
     {
         // Each line asks for a duty of its own: an answer that belongs to none of them, or a plan that holds more than what
         // was answered, would come of two halves.
-        _host.Board.ByteUs = 1;
+        // More arrives in a tick than the ring holds, and part of a line is taken before the rest is flushed.
+        _host.Board.ByteUs = 20;
+        _host.Board.MostPerReceive = 100;
         _host.Ok("plan");
         int first = _host.Request + 1;
-        for (int i = 0; i < 40; i++)
+        for (int i = 0; i < 100; i++)
         {
             _host.Type($"list 9 267 {100 + i} 9 300 {200 + i}");
         }
