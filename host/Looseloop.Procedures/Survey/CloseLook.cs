@@ -19,6 +19,7 @@ public static class CloseLook
 
     /// <summary>A sweep runs ahead of the ring: the settled maximum may lie some steps from where the survey saw it.</summary>
     private const int MostMoves = 2;
+    private const double SigmasToFollow = 3;
 
     /// <summary>What the look found.</summary>
     /// <param name="High">The setting of the maximum, duty 1/2.</param>
@@ -39,7 +40,9 @@ public static class CloseLook
         {
             Finding finding = At(box, maker, centre, cancel);
             bool maximum = finding.High.FrequencyHz == centre.FrequencyHz;
-            if (maximum || move == MostMoves)
+
+            // Where nothing stands there is nothing to follow.
+            if (maximum || move == MostMoves || !(finding.Amplitude > SigmasToFollow * finding.Sigma))
             {
                 return finding with { IsMaximum = maximum };
             }

@@ -127,6 +127,19 @@ public class TrapTests
         }
     }
 
+    // The second mode of the world, asked for by name or by a range without f0: real, and not f0.
+    [Fact]
+    public void An_overtone_that_was_asked_for_says_that_nothing_lower_was_looked_at()
+    {
+        double overtoneHz = _plain.Coil.Modes[1].F0Hz;
+        Reading near = BenchReading.Take(_plain, 1, options => options with { NearHz = overtoneHz }).Reading;
+        Assert.Contains(near.Reasons, reason => reason.Code == ReasonCode.NotSurveyed && reason.Detail.Contains("overtone", StringComparison.Ordinal));
+        Reading range = BenchReading.Take(_plain, 1, options => options with { LowHz = 300_000 }).Reading;
+        Assert.Equal(overtoneHz, range.F0Hz, 0.01 * overtoneHz);
+        Assert.Contains(range.Reasons, reason => reason.Code == ReasonCode.NotSurveyed);
+        Assert.DoesNotContain(Take(_plain).Reasons, reason => reason.Code == ReasonCode.NotSurveyed);
+    }
+
     private static Reading Take(World world) => BenchReading.Take(world, 1).Reading;
 
     private static void Expect(World world, params ReasonCode[] anyOf)
