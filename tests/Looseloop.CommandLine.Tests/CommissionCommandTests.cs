@@ -87,6 +87,49 @@ public sealed class CommissionCommandTests : IDisposable
         Assert.Equal("passed", json.RootElement.GetProperty("steps")[0].GetProperty("result").GetString());
     }
 
+    [Fact]
+    public void An_interruption_keeps_what_was_done_and_says_so()
+    {
+        AppRun run = AppRun.InterruptedAt("4. ladder", "commission", "--box", "bench:wren", "--non-interactive", "--json", "--record", _record);
+        Assert.Equal(130, run.ExitCode);
+        Assert.Contains("The steps that were done are kept", run.Error);
+        using JsonDocument json = JsonDocument.Parse(run.Out);
+        Assert.True(json.RootElement.GetProperty("interrupted").GetBoolean());
+        Assert.Equal(
+            ["passed", "passed", "passed", "not done", "not done", "not done", "not done", "not done", "not done"],
+            json.RootElement.GetProperty("steps").EnumerateArray().Select(step => step.GetProperty("result").GetString()));
+        Assert.Equal(0, Commission("--only", "ladder,direct,settling,watchdog,interlock,first-coil").ExitCode);
+    }
+
+    [Fact]
+    public void A_person_is_asked_for_each_reading_and_an_empty_line_leaves_a_step_out()
+    {
+        string[] args = ["commission", "--box", "bench:wren", "--only", "frequency", "--hold", "1s", "--json", "--record", _record];
+        AppRun read = AppRun.Answering(["", "40000", "a lot", "149812.73", "299.62547k"], args);
+        Assert.Contains("'a lot' is no number", read.Error);
+        Assert.Equal("passed", Result(read));
+        Assert.Equal("skipped", Result(AppRun.Answering(["", "40000", ""], args)));
+        Assert.Equal("skipped", Result(AppRun.Answering([], args)));
+    }
+
+    [Fact]
+    public void A_person_without_a_tone_source_leaves_the_interlock_out()
+    {
+        string[] args = ["commission", "--box", "bench:wren", "--only", "interlock", "--json", "--record", _record];
+        AppRun run = AppRun.Answering([""], args);
+        Assert.Equal("skipped", Result(run));
+        Assert.Equal(5, run.ExitCode);
+
+        // Said to sound where nothing sounds: no test of the box, and no pass.
+        Assert.Equal("skipped", Result(AppRun.Answering(["y", "y"], args)));
+    }
+
+    private static string? Result(AppRun run)
+    {
+        using JsonDocument json = JsonDocument.Parse(run.Out);
+        return json.RootElement.GetProperty("steps")[0].GetProperty("result").GetString();
+    }
+
     [Theory]
     [InlineData("--only", "frequenzy")]
     [InlineData("--only", ",")]
