@@ -92,7 +92,7 @@ internal static class RecordFile
             if (version < Migrations.Latest)
             {
                 throw new RecordException(
-                    RecordProblem.NoPermission,
+                    RecordProblem.OlderVersion,
                     $"The record {path} is of an older form ({version}). It was left as it is. Take a reading into it, which brings it up to date, or copy it to where it may be written.");
             }
 

@@ -15,6 +15,9 @@ public enum RecordProblem
     /// <summary>A newer version of this program has made or changed it.</summary>
     NewerVersion,
 
+    /// <summary>It is of an older form, and was only to be read; opened for writing it is brought up to date.</summary>
+    OlderVersion,
+
     /// <summary>It is a file of another kind.</summary>
     NotARecord,
 

@@ -26,7 +26,7 @@ public sealed class MigrationTests : IDisposable
                 run.ToByteArray(bigEndian: true)).ExecuteNonQuery();
         }
 
-        Assert.Equal(RecordProblem.NoPermission, Assert.Throws<RecordException>(() => RecordReader.Open(path)).Problem);
+        Assert.Equal(RecordProblem.OlderVersion, Assert.Throws<RecordException>(() => RecordReader.Open(path)).Problem);
         using RecordStore store = RecordStore.Open(path, _now);
         Assert.Equal("0.0.1", store.Reader.Run(1).Start.HostVersion);
         store.Append(new Fact(Guid.CreateVersion7(), FactSubject.Coil, "tall", "pull", _now, "0.1.0", "{}"));

@@ -1,5 +1,6 @@
 using Looseloop.Box;
 using Looseloop.Link;
+using Looseloop.Procedures.Read;
 using Looseloop.Protocol;
 using Looseloop.Readings;
 
@@ -29,15 +30,16 @@ internal sealed class BoxKeeper(IBoxSource source, LogOptions options, LogState 
     public BoxIdentity? Known { get; private set; }
 
     /// <summary>Opens the box for the first time and sets its interlock by its detector's law.</summary>
-    public DetectorLaw Begin()
+    /// <returns>How readings are taken of it.</returns>
+    public ReadOptions Begin()
     {
         _link = source.Open();
         Session = BoxSession.Open(_link, options.Patience, cancel);
         Known = Session.Identity;
-        DetectorLaw law = options.LawOf?.Invoke(Session) ?? options.Read.Law;
-        Interlock.Set(Session, law);
+        ReadOptions read = options.ReadOf?.Invoke(Session) ?? options.Read;
+        Interlock.Set(Session, read.Law);
         _limits = Session.Limits();
-        return law;
+        return read;
     }
 
     /// <summary>The exchange with the box went wrong: asks it who it is, on the same link.</summary>

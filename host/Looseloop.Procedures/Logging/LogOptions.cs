@@ -1,6 +1,5 @@
 using Looseloop.Box;
 using Looseloop.Procedures.Read;
-using Looseloop.Readings;
 
 namespace Looseloop.Procedures.Logging;
 
@@ -10,11 +9,11 @@ public sealed record LogOptions
     /// <summary>How readings are taken; the log puts the source's clock in.</summary>
     public required ReadOptions Read { get; init; }
 
-    /// <summary>Says the detector's law once the box has identified itself; null where <see cref="Read"/> has the right one.</summary>
-    public Func<BoxSession, DetectorLaw>? LawOf { get; init; }
-
-    /// <summary>Says whether a box is commissioned once it has identified itself; null where <see cref="Read"/> has it right.</summary>
-    public Func<BoxIdentity, bool>? CommissionedOf { get; init; }
+    /// <summary>
+    /// Says how readings are taken once the box has identified itself, with what is known of it and of the coil; null where
+    /// <see cref="Read"/> says it all.
+    /// </summary>
+    public Func<BoxSession, ReadOptions>? ReadOf { get; init; }
 
     /// <summary>From reading to reading; zero for one after the other.</summary>
     public TimeSpan Every { get; init; } = TimeSpan.FromSeconds(10);

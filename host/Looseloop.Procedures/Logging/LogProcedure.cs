@@ -12,7 +12,7 @@ namespace Looseloop.Procedures.Logging;
 public sealed class LogProcedure
 {
     private readonly LogOptions _options;
-    private readonly ReadOptions _read;
+    private readonly TimeProvider _time;
     private readonly ILogWatch _watch;
     private readonly CancellationToken _cancel;
     private readonly LogState _state = new();
@@ -27,7 +27,7 @@ public sealed class LogProcedure
     public LogProcedure(IBoxSource source, LogOptions options, IRunSink sink, ILogWatch watch, CancellationToken cancel)
     {
         _options = options;
-        _read = options.Read with { Time = source.Time };
+        _time = source.Time;
         _watch = watch;
         _cancel = cancel;
         _keeper = new BoxKeeper(source, options, _state, cancel);
@@ -35,7 +35,7 @@ public sealed class LogProcedure
         _schedule = new LogSchedule(options, _writer, cancel);
         _pauses = new LogPauses(options, _keeper, _writer, _state, watch, cancel);
         _settling = new LogSettling(options, _state);
-        _readings = ReadingsBy(_read);
+        _readings = ReadingsBy(options.Read with { Time = source.Time });
     }
 
     /// <summary>Logs until the time is up, f0 is settled, or the user interrupts.</summary>
@@ -46,9 +46,7 @@ public sealed class LogProcedure
     {
         try
         {
-            ReadOptions read = _read with { Law = _keeper.Begin() };
-            read = read with { Commissioned = _options.CommissionedOf?.Invoke(_keeper.Known!) ?? read.Commissioned };
-            _readings = ReadingsBy(read);
+            _readings = ReadingsBy(_keeper.Begin() with { Time = _time });
             _writer.Start(_options, _keeper.Known!);
             return RunToEnd(_schedule.Begin());
         }

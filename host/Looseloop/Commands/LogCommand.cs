@@ -64,7 +64,7 @@ internal sealed class LogCommand(Shell shell)
         using RecordStore store = RecordChoice.OpenForWriting(shell, parsed);
         using TextWriter? trace = parsed.GetValue(BoxChoice.TraceOption) is string path ? new StreamWriter(path) { AutoFlush = true } : null;
         IBoxSource source = world is null ? new PortSource(name, trace) : new BenchSource(new VirtualBox(world, parsed.GetValue(BoxChoice.SeedOption)), trace);
-        LogOptions options = Options(parsed, name, world, new RecordFacts(store, AppVersion.Text));
+        LogOptions options = Options(parsed, world, new RecordedFacts(store.Reader));
         LogSummary summary = LogScreen.Run(
             shell, parsed.GetValue(CommonOptions.Json), quiet, options,
             watch => RunLog(new LogProcedure(source, options, store, watch, shell.Cancel)));
@@ -89,19 +89,14 @@ internal sealed class LogCommand(Shell shell)
         }
     }
 
-    private LogOptions Options(ParseResult parsed, string name, World? world, RecordFacts facts)
+    private LogOptions Options(ParseResult parsed, World? world, RecordedFacts facts)
     {
-        string? coil = parsed.GetValue(_coil);
-        IReadOnlyDictionary<string, string> setUp = coil is null ? new Dictionary<string, string>() : facts.SetUpOf(coil);
         var read = new ReadOptions
         {
             Law = DetectorLaw.Declared(Readings.DetectorKind.RmsLinear, 0),
             NearHz = parsed.GetValue(_near),
             MainsHz = parsed.GetValue(_mains) ?? 50,
-            Clock = facts.ClockOf(name),
-            Pull = coil is null ? null : facts.PullOf(coil, setUp),
-            SetUp = setUp,
-            Coil = coil,
+            Coil = parsed.GetValue(_coil),
             Note = parsed.GetValue(_note),
             HostVersion = AppVersion.Text,
             Time = shell.Time,
@@ -109,8 +104,8 @@ internal sealed class LogCommand(Shell shell)
         var plain = new LogOptions { Read = read };
         return plain with
         {
-            LawOf = box => facts.LawOf(name) ?? (world is null ? UndeclaredBox.LawOf(box) : BoxChoice.LawOf(world)),
-            CommissionedOf = box => KnownFacts.IsCommissioned(box, facts),
+            ReadOf = box => KnownFacts.Apply(
+                read with { Law = world is null ? UndeclaredBox.LawOf(box) : BoxChoice.LawOf(world) }, box.Identity, facts),
             Every = Seconds(parsed.GetValue(_every)) ?? plain.Every,
             For = Seconds(parsed.GetValue(_for)),
             UntilSettled = parsed.GetValue(_untilSettled),

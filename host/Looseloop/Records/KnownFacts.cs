@@ -19,8 +19,8 @@ internal static class KnownFacts
 
         try
         {
-            using RecordStore store = RecordChoice.OpenForWriting(shell, parsed);
-            return Apply(options, box, new RecordFacts(store, AppVersion.Text));
+            using RecordReader record = OpenForReading(shell, parsed);
+            return Apply(options, box, new RecordedFacts(record));
         }
         catch (RecordException error) when (error.Problem == RecordProblem.Busy)
         {
@@ -30,7 +30,7 @@ internal static class KnownFacts
     }
 
     /// <summary>The same from open facts.</summary>
-    public static ReadOptions Apply(ReadOptions options, BoxIdentity box, RecordFacts facts)
+    public static ReadOptions Apply(ReadOptions options, BoxIdentity box, RecordedFacts facts)
     {
         IReadOnlyDictionary<string, string> setUp = options.Coil is string name && options.SetUp.Count == 0 ? facts.SetUpOf(name) : options.SetUp;
         return options with
@@ -44,6 +44,21 @@ internal static class KnownFacts
     }
 
     /// <summary>True if every step of commissioning stands passed for this board with this firmware.</summary>
-    public static bool IsCommissioned(BoxIdentity box, RecordFacts facts) =>
+    public static bool IsCommissioned(BoxIdentity box, RecordedFacts facts) =>
         CommissioningStanding.Of(facts.CommissioningsOf(box.Port), box.Board, box.FirmwareVersion).IsComplete;
+
+    // A look needs no writer's lock, so a log that runs meanwhile is not in the way; only a record of an older form has to be
+    // brought up to date first.
+    private static RecordReader OpenForReading(Shell shell, ParseResult parsed)
+    {
+        try
+        {
+            return RecordChoice.OpenForReading(shell, parsed);
+        }
+        catch (RecordException error) when (error.Problem == RecordProblem.OlderVersion)
+        {
+            RecordChoice.OpenForWriting(shell, parsed).Dispose();
+            return RecordChoice.OpenForReading(shell, parsed);
+        }
+    }
 }

@@ -23,7 +23,7 @@ internal sealed class RefitRun(Shell shell, RecordStore store, bool factsNow, IR
 {
     private const string Standoff = "standoff";
 
-    private readonly RecordFacts _facts = new(store, AppVersion.Text);
+    private readonly RecordedFacts _facts = new(store.Reader);
     private Guid? _run;
     private (long Number, FitBasis Before, ReadOutcome Outcome)? _full;
 
@@ -111,6 +111,7 @@ internal sealed class RefitRun(Shell shell, RecordStore store, bool factsNow, IR
         {
             Law = law,
             Clock = _facts.ClockOf(kept.Box.Port) ?? before.Clock,
+            Commissioned = before.Commissioned || KnownFacts.IsCommissioned(kept.Box, _facts),
             Pull = pulled ? _facts.PullOf(kept.Coil!, kept.SetUp) ?? before.Pull : before.Pull,
         };
     }

@@ -23,6 +23,11 @@ internal static class RefitWords
         {
             yield return $"pull: {Pull(before.Pull)}; now {Pull(now.Pull)}";
         }
+
+        if (before.Commissioned != now.Commissioned)
+        {
+            yield return "the box has been commissioned since";
+        }
     }
 
     private static string Law(DetectorLaw law) => Text(
