@@ -60,9 +60,6 @@ public sealed record FitBasis
     /// <summary>True if even the lowest duty left the converter at its upper end.</summary>
     public bool Saturated { get; init; }
 
-    /// <summary>Where the survey before the reading saw other resonances close to f0, hertz.</summary>
-    public IReadOnlyList<double> NeighboursHz { get; init; } = [];
-
-    /// <summary>Where it saw higher modes of the coil, hertz.</summary>
-    public IReadOnlyList<double> OvertonesHz { get; init; } = [];
+    /// <summary>What the survey before the reading saw; null for a reading near a given frequency.</summary>
+    public SurveySeen? Survey { get; init; }
 }

@@ -39,9 +39,17 @@ internal static class BasisJson
         json.WriteNumber("missing_in_sweep", basis.MissingInSweep);
         json.WriteNumber("missing_in_checks", basis.MissingInChecks);
         json.WriteBoolean("saturated", basis.Saturated);
-        Array(json, "harmonics", basis.Harmonics, value => json.WriteNumberValue(value));
-        Array(json, "neighbours_hz", basis.NeighboursHz, value => json.WriteNumberValue(value));
-        Array(json, "overtones_hz", basis.OvertonesHz, value => json.WriteNumberValue(value));
+        json.WriteStartArray("harmonics");
+        foreach (int harmonic in basis.Harmonics)
+        {
+            json.WriteNumberValue(harmonic);
+        }
+
+        json.WriteEndArray();
+        if (basis.Survey is { } survey)
+        {
+            Write(json, survey);
+        }
     }
 
     /// <summary>The basis of a text, without points.</summary>
@@ -63,20 +71,35 @@ internal static class BasisJson
         MissingInChecks = json.GetProperty("missing_in_checks").GetInt32(),
         Saturated = json.GetProperty("saturated").GetBoolean(),
         Harmonics = [.. json.GetProperty("harmonics").EnumerateArray().Select(value => value.GetInt32())],
-        NeighboursHz = [.. json.GetProperty("neighbours_hz").EnumerateArray().Select(value => value.GetDouble())],
-        OvertonesHz = [.. json.GetProperty("overtones_hz").EnumerateArray().Select(value => value.GetDouble())],
+        Survey = json.TryGetProperty("survey", out JsonElement survey) ? ToSurvey(survey) : null,
         AtOtherDuty = [],
         AfterLongerDwell = [],
     });
 
-    private static void Array<T>(Utf8JsonWriter json, string name, IEnumerable<T> values, Action<T> write)
+    private static void Write(Utf8JsonWriter json, SurveySeen survey)
     {
-        json.WriteStartArray(name);
-        foreach (T value in values)
+        json.WriteStartObject("survey");
+        ReadingJson.Number(json, "low_hz", survey.LowHz);
+        json.WriteStartArray("responses");
+        foreach (SeenResponse response in survey.Responses)
         {
-            write(value);
+            json.WriteStartObject();
+            json.WriteString("kind", response.Kind);
+            ReadingJson.Number(json, "frequency_hz", response.FrequencyHz);
+            ReadingJson.Number(json, "amplitude_counts", response.Amplitude);
+            json.WriteNumber("harmonic", response.Harmonic);
+            json.WriteEndObject();
         }
 
         json.WriteEndArray();
+        json.WriteEndObject();
     }
+
+    private static SurveySeen ToSurvey(JsonElement json) => new(
+        FactJson.Figure(json, "low_hz"),
+        [
+            .. json.GetProperty("responses").EnumerateArray().Select(response => new SeenResponse(
+                response.GetProperty("kind").GetString()!, FactJson.Figure(response, "frequency_hz"),
+                FactJson.Figure(response, "amplitude_counts"), response.GetProperty("harmonic").GetInt32())),
+        ]);
 }

@@ -47,8 +47,8 @@ public sealed class RoundTripTests : IDisposable
         Assert.Equal(expected.AtOtherDuty, actual.AtOtherDuty);
         Assert.Equal(expected.AfterLongerDwell, actual.AfterLongerDwell);
         Assert.Equal(expected.Harmonics, actual.Harmonics);
-        Assert.Equal(expected.NeighboursHz, actual.NeighboursHz);
-        Assert.Equal(expected.OvertonesHz, actual.OvertonesHz);
+        Assert.Equal(expected.Survey?.LowHz, actual.Survey?.LowHz);
+        Assert.Equal(expected.Survey?.Responses, actual.Survey?.Responses);
         Assert.Equal(Bare(expected), Bare(actual));
 
         static FitBasis Bare(FitBasis basis) => basis with
@@ -56,8 +56,7 @@ public sealed class RoundTripTests : IDisposable
             AtOtherDuty = _noPoints,
             AfterLongerDwell = _noPoints,
             Harmonics = _noHarmonics,
-            NeighboursHz = _noHertz,
-            OvertonesHz = _noHertz,
+            Survey = null,
         };
     }
 
@@ -82,12 +81,10 @@ public sealed class RoundTripTests : IDisposable
         MissingInSweep = 2,
         MissingInChecks = 3,
         Saturated = true,
-        NeighboursHz = [151000.7],
-        OvertonesHz = [450300.2, 612000.9],
+        Survey = new SurveySeen(30000, [new SeenResponse("f0", 150000.3, 1234.5, 1), new SeenResponse("carrier", 612000.9, double.NaN, 0)]),
     };
 
     private static readonly int[] _noHarmonics = [];
-    private static readonly double[] _noHertz = [];
     private static readonly Dictionary<string, string> _empty = [];
     private static readonly RawPoint[] _noPoints = [];
     private static readonly DarkLevel[] _noDark = [];

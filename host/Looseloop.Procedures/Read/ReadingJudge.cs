@@ -60,10 +60,11 @@ internal static class ReadingJudge
         MissingInSweep = measurement.MissingInSweep,
         MissingInChecks = measurement.Missing - measurement.MissingInSweep,
         Saturated = measurement.Saturated,
-        NeighboursHz = Seen(measurement.Survey, ResponseKind.Neighbour),
-        OvertonesHz = Seen(measurement.Survey, ResponseKind.Overtone),
+        Survey = measurement.Survey is { } survey
+            ? new SurveySeen(measurement.Options.LowHz, [.. survey.Responses.Select(Seen)])
+            : null,
     };
 
-    private static double[] Seen(SurveyResult? survey, ResponseKind kind) =>
-        [.. survey?.Responses.Where(response => response.Kind == kind).Select(response => response.FrequencyHz) ?? []];
+    private static SeenResponse Seen(Response response) =>
+        new(response.Kind.ToString().ToLowerInvariant(), response.FrequencyHz, response.Amplitude, response.Harmonic);
 }

@@ -118,6 +118,7 @@ public static class ReadingRefit
     private static ReadOptions Options(Reading original, FitBasis basis, string hostVersion, TimeProvider time) => new()
     {
         Law = basis.Law,
+        LowHz = basis.Survey?.LowHz ?? SurveySweep.LowHz,
         PrefactorExponent = basis.PrefactorExponent,
         Clock = basis.Clock,
         Pull = basis.Pull,
@@ -129,16 +130,13 @@ public static class ReadingRefit
         Time = time,
     };
 
-    /// <summary>What the survey said of other resonances, which the points alone cannot tell.</summary>
-    private static SurveyResult SurveyOf(FitBasis basis, DarkLevel look)
-    {
-        Response Seen(ResponseKind kind, double hz) => new(kind, hz, double.NaN, 1, double.NaN, double.NaN);
-        Response[] responses =
-        [
-            .. basis.NeighboursHz.Select(hz => Seen(ResponseKind.Neighbour, hz)), .. basis.OvertonesHz.Select(hz => Seen(ResponseKind.Overtone, hz)),
-        ];
-        return new SurveyResult([], [], look, responses, LargestAtEdge: false, Saturated: false);
-    }
+    private static SurveyResult? SurveyOf(FitBasis basis, DarkLevel look) => basis.Survey is { } seen
+        ? new SurveyResult([], [], look, [.. seen.Responses.Select(Response)], LargestAtEdge: false, Saturated: false)
+        : null;
+
+    private static Response Response(SeenResponse seen) => new(
+        Enum.TryParse(seen.Kind, ignoreCase: true, out ResponseKind kind) ? kind : ResponseKind.Unknown,
+        seen.FrequencyHz, seen.Amplitude, seen.Harmonic, double.NaN, double.NaN);
 
     private static Reading Document(Reading original, string hostVersion, DateTimeOffset now) => original with
     {

@@ -34,6 +34,15 @@ public class ReadingRefitTests
     }
 
     [Fact]
+    public void A_reading_near_a_given_frequency_is_fitted_again_as_one()
+    {
+        Reading kept = BenchReading.Take(WorldShelf.Load("wren"), 3, options => options with { NearHz = 150_000 }).Reading;
+        Reading again = Again(kept, kept.Basis!);
+        Assert.Equal(kept.Reasons, again.Reasons);
+        Assert.True(RefitChanges.Between(kept, again).Same);
+    }
+
+    [Fact]
     public void Clock_and_pull_are_taken_off_as_they_were_the_first_time()
     {
         var clock = new ClockTrim(25, 1, DateTimeOffset.UnixEpoch);
@@ -66,7 +75,10 @@ public class ReadingRefitTests
     public void What_the_survey_saw_beside_f0_still_stands_against_it()
     {
         Reading kept = BenchReading.Take(WorldShelf.Load("wren"), 1).Reading;
-        Reading again = Again(kept, kept.Basis! with { NeighboursHz = [kept.F0Hz * 1.02] });
+        Reading again = Again(kept, kept.Basis! with
+        {
+            Survey = kept.Basis.Survey! with { Responses = [.. kept.Basis.Survey.Responses, new SeenResponse("neighbour", kept.F0Hz * 1.02, 500, 1)] },
+        });
         Assert.Contains(again.Reasons, reason => reason.Code == ReasonCode.TwoResponses);
         Assert.NotEqual(Verdict.Sound, again.Verdict);
     }
