@@ -57,7 +57,7 @@ public static class SurveyReasons
         if (lowHz > SurveySweep.LowHz && lowHz > f0 / LargestOvertone)
         {
             yield return new Reason(
-                ReasonCode.NotSurveyed, $"Nothing below {Math.Min(lowHz, f0) / 1000:0.#} kHz was looked at: were f0 there, this would be an overtone.");
+                ReasonCode.NotSurveyed, $"Nothing below {Math.Min(lowHz, f0) / 1000:0.#} kHz was looked at: if f0 lies lower, this is an overtone.");
         }
 
         if (measurement.Survey is not SurveyResult survey)

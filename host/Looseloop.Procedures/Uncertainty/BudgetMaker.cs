@@ -35,6 +35,12 @@ public static class BudgetMaker
     private const double UnreadBow = 0.01;
     private const double ReadBow = 0.002;
 
+    /// <summary>
+    /// Directions that a smooth misfit lies in: offset, slope, bow and twist (an assumption; the campaign's second coils and
+    /// coupled primaries try it).
+    /// </summary>
+    private const double SmoothDirections = 4;
+
     /// <summary>What edges that are uneven by up to 100 ns leave of a duty near 1/2 in the third and fifth harmonic.</summary>
     private const double SecondOrderOfEdges = 1e-3;
 
@@ -80,15 +86,19 @@ public static class BudgetMaker
         return new("noise", m.Fit.Noise.F0Hz * Math.Sqrt(f0), m.Fit.Noise.Q / m.Fit.Q * Math.Sqrt(q), true, freedom, origin);
     }
 
-    /// <summary>What is left about the curve beyond what the way back repeats otherwise: the same in every reading.</summary>
+    /// <summary>
+    /// What is left about the curve beyond what the way back repeats otherwise: the same in every reading. Unlike noise it is
+    /// smooth along the curve, so its whole sum of squares is taken to lie in a few directions, the parameters' among them.
+    /// </summary>
     private static BudgetLine Misfit(Measurement m)
     {
         double chi = m.Fit.ChiSquareProbability < 1e-3 ? m.Fit.SumOfSquares / m.Fit.DegreesOfFreedom : 0;
         double all = Math.Max(chi, m.Fit.RobustScale * m.Fit.RobustScale);
+        double share = Math.Max(m.Fit.DegreesOfFreedom / SmoothDirections, 1);
         (double f0, double q) = Excesses(m);
         return new(
-            "misfit", m.Fit.Noise.F0Hz * Math.Sqrt(Math.Max(all - f0, 0)), m.Fit.Noise.Q / m.Fit.Q * Math.Sqrt(Math.Max(all - q, 0)), false,
-            m.Fit.DegreesOfFreedom, "scatter about the curve that the way back repeats");
+            "misfit", m.Fit.Noise.F0Hz * Math.Sqrt(Math.Max(all - f0, 0) * share), m.Fit.Noise.Q / m.Fit.Q * Math.Sqrt(Math.Max(all - q, 0) * share),
+            false, m.Fit.DegreesOfFreedom, "scatter about the curve that the way back repeats");
     }
 
     /// <summary>Variances by both over what the samples say; by the curve's scatter where no pairs tell.</summary>
