@@ -3,6 +3,7 @@ using Looseloop.Bench;
 using Looseloop.Box;
 using Looseloop.Procedures.Read;
 using Looseloop.Readings;
+using Looseloop.Resonance;
 
 namespace Looseloop.Campaign;
 
@@ -32,7 +33,7 @@ public static class RandomCampaign
 
         Line("all", done);
         Result[] sound = [.. done.Where(r => r.Verdict == Verdict.Sound)];
-        Console.WriteLine($"sound readings, 95 % repeatability interval holds f0 {Share(sound, r => r.F0Repeat, 1.96):P1}, Q {Share(sound, r => r.QRepeat, 1.96):P1}");
+        Console.WriteLine($"sound readings, 95 % repeatability interval holds f0 {Share(sound, r => r.F0Repeat, 1):P1}, Q {Share(sound, r => r.QRepeat, 1):P1}");
         Console.WriteLine($"sound readings, 95 % absolute interval holds f0 {Share(sound, r => r.F0Z, 2):P1}, Q {Share(sound, r => r.QZ, 2):P1}");
         BoardTime("all", done);
         BoardTime("f0 from 100 kHz, Q to 400, sound", [.. sound.Where(r => Truth.Unloaded(r.World) is { F0Hz: >= 100e3, Q: <= 400 })]);
@@ -93,8 +94,10 @@ public static class RandomCampaign
                 .Select(i => BenchReading.Take(drawn.World, seed + ((ulong)i << 32), options => Read(options, drawn)).Reading)
                 .Where(r => double.IsFinite(r.F0Hz))];
             double widen = Math.Sqrt(1 + (1.0 / Math.Max(again.Length, 1)));
-            double f0Repeat = again.Length == 0 ? double.NaN : (reading.F0Hz - again.Average(r => r.F0Hz)) / (reading.Budget.F0Hz(false) * widen);
-            double qRepeat = again.Length == 0 ? double.NaN : (reading.Q - again.Average(r => r.Q)) / (reading.Q * reading.Budget.QRelative(false) * widen);
+            double f0Half = CoverageFactor.TwoSided(reading.Budget.F0DegreesOfFreedom(false), 0.95) * reading.Budget.F0Hz(false);
+            double qHalf = CoverageFactor.TwoSided(reading.Budget.QDegreesOfFreedom(false), 0.95) * reading.Q * reading.Budget.QRelative(false);
+            double f0Repeat = again.Length == 0 ? double.NaN : (reading.F0Hz - again.Average(r => r.F0Hz)) / (f0Half * widen);
+            double qRepeat = again.Length == 0 ? double.NaN : (reading.Q - again.Average(r => r.Q)) / (qHalf * widen);
             return new Result(
                 drawn.Defect, seed, reading.Verdict, (reading.F0Hz - truth.F0Hz) / reading.Budget.F0Hz(true),
                 (reading.Q - truth.Q) / (reading.Q * reading.Budget.QRelative(true)), f0Repeat, qRepeat, reasons, drawn.World, reading.BoardSeconds);
