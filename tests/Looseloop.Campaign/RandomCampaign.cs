@@ -106,6 +106,11 @@ public static class RandomCampaign
         {
             return new Result(drawn.Defect, seed, Verdict.None, 0, 0, 0, 0, refusal.FieldPresent ? "field-present" : $"box:{refusal.FaultCode}", drawn.World, 0);
         }
+        catch (InvalidOperationException defect)
+        {
+            Console.WriteLine($"  seed {seed} {drawn.Defect} broke the program: {defect.Message}");
+            return new Result(drawn.Defect, seed, Verdict.None, 0, 0, 0, 0, "broken", drawn.World, 0);
+        }
     }
 
     /// <summary>

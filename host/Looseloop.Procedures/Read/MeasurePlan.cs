@@ -140,7 +140,13 @@ public sealed record MeasurePlan(
     private static MeasurePlan Even(BoxSession box, Target target, int dwellUs, int spacingUs)
     {
         const int Points = 17;
+        const int FewestEven = 6;
         Setting[] all = [.. Around(box, target, 1, target.Duty)];
+        if (all.Length < FewestEven)
+        {
+            all = [.. CurveSweep.About(box.Grid, target.F0Hz, FewestEven, 1, target.Duty).Where(setting => IsInside(box, setting))];
+        }
+
         int stride = Math.Max(1, all.Length / Points);
         Setting[] settings = [.. all.Where((_, i) => i % stride == 0)];
         return new MeasurePlan(settings, settings.ToDictionary(setting => setting, _ => 1), dwellUs, SamplesAMainsPeriod, spacingUs);
