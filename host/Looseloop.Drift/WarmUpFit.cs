@@ -1,3 +1,5 @@
+using Looseloop.Statistics;
+
 namespace Looseloop.Drift;
 
 /// <summary>
@@ -101,7 +103,7 @@ public static class WarmUpFit
         double extra = rich.Parameters - plain.Parameters;
         double f = (plain.ChiSquare - rich.ChiSquare) / rich.ChiSquare * freedom / extra;
         double akaike = (thinned * Math.Log(plain.ChiSquare / rich.ChiSquare)) - Penalty(rich) + Penalty(plain);
-        return akaike > 10 && Distributions.FisherAbove(f, extra, freedom) < TermProbability;
+        return akaike > 10 && FisherF.UpperTail(f, extra, freedom) < TermProbability;
 
         // Akaike's criterion with the correction for small samples (Hurvich and Tsai, Biometrika 76 (1989) 297; from memory).
         double Penalty(WarmUpModel model)

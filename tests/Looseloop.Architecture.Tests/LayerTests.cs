@@ -12,16 +12,21 @@ public class LayerTests
         ["looseloop"] =
         [
             "Looseloop.Procedures", "Looseloop.Report", "Looseloop.Record", "Looseloop.Bench", "Looseloop.Box", "Looseloop.Link",
-            "Looseloop.Protocol", "Looseloop.Resonance", "Looseloop.Coil", "Looseloop.Drift", "Looseloop.Readings",
+            "Looseloop.Protocol", "Looseloop.Resonance", "Looseloop.Coil", "Looseloop.Drift", "Looseloop.Statistics", "Looseloop.Readings",
         ],
-        ["Looseloop.Procedures"] = ["Looseloop.Box", "Looseloop.Link", "Looseloop.Protocol", "Looseloop.Resonance", "Looseloop.Coil", "Looseloop.Drift", "Looseloop.Readings"],
+        ["Looseloop.Procedures"] =
+        [
+            "Looseloop.Box", "Looseloop.Link", "Looseloop.Protocol", "Looseloop.Resonance", "Looseloop.Coil", "Looseloop.Drift",
+            "Looseloop.Statistics", "Looseloop.Readings",
+        ],
         ["Looseloop.Box"] = ["Looseloop.Link", "Looseloop.Protocol", "Looseloop.Readings"],
         ["Looseloop.Link"] = ["Looseloop.Protocol"],
         ["Looseloop.Protocol"] = [],
         ["Looseloop.Readings"] = [],
-        ["Looseloop.Resonance"] = ["Looseloop.Readings"],
+        ["Looseloop.Statistics"] = [],
+        ["Looseloop.Resonance"] = ["Looseloop.Statistics", "Looseloop.Readings"],
         ["Looseloop.Coil"] = ["Looseloop.Readings"],
-        ["Looseloop.Drift"] = ["Looseloop.Readings"],
+        ["Looseloop.Drift"] = ["Looseloop.Statistics", "Looseloop.Readings"],
         ["Looseloop.Record"] = ["Looseloop.Readings"],
         ["Looseloop.Report"] = ["Looseloop.Readings"],
         ["Looseloop.Firmware.Core"] = ["Looseloop.Protocol"],
@@ -29,7 +34,8 @@ public class LayerTests
     };
 
     /// <summary>Pure layers: no files, no ports, no console, no clock of their own.</summary>
-    private static readonly string[] _pure = ["Looseloop.Resonance", "Looseloop.Coil", "Looseloop.Drift", "Looseloop.Readings"];
+    private static readonly string[] _pure =
+        ["Looseloop.Resonance", "Looseloop.Coil", "Looseloop.Drift", "Looseloop.Statistics", "Looseloop.Readings"];
 
     private static readonly string[] _impureTypes =
     [

@@ -5,6 +5,7 @@ using Looseloop.Link;
 using Looseloop.Procedures.Logging;
 using Looseloop.Procedures.Read;
 using Looseloop.Readings;
+using Looseloop.Statistics;
 
 namespace Looseloop.Campaign;
 
@@ -83,7 +84,7 @@ public static class CoolDowns
         }
 
         var truth = Truth.Loaded(world, stopS);
-        double k = Distributions.CoverageFactor(0.95, end.F0.DegreesOfFreedom);
+        double k = CoverageFactor.TwoSided(end.F0.DegreesOfFreedom, 0.95);
         double f0 = k * end.F0StandardHz;
         double q = k * end.QStandard;
         return new Result

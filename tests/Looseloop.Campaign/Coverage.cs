@@ -3,6 +3,7 @@ using Looseloop.Bench;
 using Looseloop.Procedures.Read;
 using Looseloop.Readings;
 using Looseloop.Resonance;
+using Looseloop.Statistics;
 
 namespace Looseloop.Campaign;
 

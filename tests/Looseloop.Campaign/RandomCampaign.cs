@@ -4,6 +4,7 @@ using Looseloop.Box;
 using Looseloop.Procedures.Read;
 using Looseloop.Readings;
 using Looseloop.Resonance;
+using Looseloop.Statistics;
 
 namespace Looseloop.Campaign;
 
@@ -43,6 +44,12 @@ public static class RandomCampaign
             {
                 Truth truth = Truth.Unloaded(r.World);
                 Console.WriteLine($"  seed {r.Seed} {r.Defect} f0 {truth.F0Hz:0} Q {truth.Q:0} {r.World.Detector.Kind} ft {r.World.FeedThrough.Fraction:0.00}: z(f0) {r.F0Z:0.0}, z(Q) {r.QZ:0.0}");
+            }
+
+            foreach (Result r in done.OrderByDescending(r => r.BoardSeconds).Take(12))
+            {
+                Truth truth = Truth.Unloaded(r.World);
+                Console.WriteLine($"  seed {r.Seed} {r.Defect} f0 {truth.F0Hz:0} Q {truth.Q:0} {r.World.Detector.Kind}: {r.BoardSeconds:0.0} s");
             }
 
             foreach (Result r in done.Where(r => (r.Defect == Defect.Nothing || only is not null) && r.Verdict != Verdict.Sound).Take(30))

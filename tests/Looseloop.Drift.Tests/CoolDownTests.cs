@@ -1,3 +1,5 @@
+using Looseloop.Statistics;
+
 namespace Looseloop.Drift.Tests;
 
 public class CoolDownTests
@@ -38,7 +40,7 @@ public class CoolDownTests
         {
             World world = Draw(noise, fast);
             CoolDown cool = Extrapolate(world, noise)!;
-            double k = Distributions.CoverageFactor(0.95, cool.DegreesOfFreedom);
+            double k = CoverageFactor.TwoSided(cool.DegreesOfFreedom, 0.95);
             double truth = world.EndHz + world.DropHz + world.FastHz;
             covered += Math.Abs(cool.AtStop - truth) < k * cool.AtStopStandard ? 1 : 0;
         }

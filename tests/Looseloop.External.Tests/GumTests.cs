@@ -1,4 +1,5 @@
 using Looseloop.Resonance;
+using Looseloop.Statistics;
 
 namespace Looseloop.External.Tests;
 

@@ -1,3 +1,5 @@
+using Looseloop.Statistics;
+
 namespace Looseloop.Drift.Comparison;
 
 /// <summary>
@@ -18,16 +20,16 @@ public sealed record Change(
     public const double Coverage = 0.95;
 
     /// <summary>Expanded uncertainty of the difference at <see cref="Coverage"/>.</summary>
-    public double Expanded => Distributions.CoverageFactor(Coverage, DegreesOfFreedom) * Standard;
+    public double Expanded => CoverageFactor.TwoSided(DegreesOfFreedom, Coverage) * Standard;
 
     /// <summary>Judges a difference.</summary>
     public static Change Judge(double difference, double standard, double degreesOfFreedom, double margin)
     {
         double freedom = Math.Max(1, degreesOfFreedom);
-        double expanded = Distributions.CoverageFactor(Coverage, freedom) * standard;
+        double expanded = CoverageFactor.TwoSided(freedom, Coverage) * standard;
 
         // One-sided 95 % for the power: the two-sided factor of 90 %.
-        double detectable = expanded + (Distributions.CoverageFactor(0.90, freedom) * standard);
+        double detectable = expanded + (CoverageFactor.TwoSided(freedom, 0.90) * standard);
         ChangeVerdict verdict = Math.Abs(difference) > expanded ? ChangeVerdict.Changed
             : Math.Abs(difference) + expanded < margin ? ChangeVerdict.NotChanged
             : ChangeVerdict.CannotTell;

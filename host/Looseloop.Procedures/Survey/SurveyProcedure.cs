@@ -7,7 +7,7 @@ namespace Looseloop.Procedures.Survey;
 /// <summary>Finds every response in a range and names it.</summary>
 public static class SurveyProcedure
 {
-    private const int MostResponses = 10;
+    private const int MostResponses = 8;
 
     /// <summary>Above this share of its range a converter, or the detector before it, may be at its end.</summary>
     internal const double SaturatedShare = 0.92;

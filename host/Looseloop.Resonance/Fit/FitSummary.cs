@@ -1,3 +1,5 @@
+using Looseloop.Statistics;
+
 namespace Looseloop.Resonance;
 
 /// <summary>Turns the end of a minimisation into a <see cref="ResonanceFit"/>.</summary>

@@ -1,5 +1,5 @@
 using Looseloop.Readings;
-using Looseloop.Resonance;
+using Looseloop.Statistics;
 
 namespace Looseloop.Rendering;
 

@@ -3,6 +3,7 @@ using Looseloop.Drift;
 using Looseloop.Procedures.Logging;
 using Looseloop.Procedures.Tests.Tracking;
 using Looseloop.Readings;
+using Looseloop.Statistics;
 using Xunit.Abstractions;
 
 namespace Looseloop.Procedures.Tests.Logging;
@@ -35,7 +36,7 @@ public class FieldTests(ITestOutputHelper output)
 
             FieldEnd end = watch.FieldEnd!;
             var truth = Truth.Loaded(draw.World, draw.StopS);
-            double k = Distributions.CoverageFactor(0.95, end.F0.DegreesOfFreedom);
+            double k = CoverageFactor.TwoSided(end.F0.DegreesOfFreedom, 0.95);
             f0Covered += Math.Abs(end.F0.AtStop - truth.F0Hz) < k * end.F0StandardHz ? 1 : 0;
             qCovered += end.Q is not null && Math.Abs(end.Q.AtStop - truth.Q) < k * end.QStandard ? 1 : 0;
             output.WriteLine(

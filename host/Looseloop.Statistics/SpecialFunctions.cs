@@ -1,4 +1,4 @@
-namespace Looseloop.Resonance;
+namespace Looseloop.Statistics;
 
 /// <summary>The special functions behind chi-square and Student's t (Abramowitz and Stegun, chapters 6 and 26; DLMF 8).</summary>
 internal static class SpecialFunctions

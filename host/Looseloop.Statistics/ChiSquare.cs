@@ -1,4 +1,4 @@
-namespace Looseloop.Resonance;
+namespace Looseloop.Statistics;
 
 /// <summary>The chi-square distribution.</summary>
 public static class ChiSquare

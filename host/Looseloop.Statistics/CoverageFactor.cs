@@ -1,4 +1,4 @@
-namespace Looseloop.Resonance;
+namespace Looseloop.Statistics;
 
 /// <summary>
 /// The factor k between a standard uncertainty and the half-width of an interval: Student's t, two-sided (JCGM 100:2008, GUM, G.3

@@ -1,6 +1,6 @@
-namespace Looseloop.Drift.Tests;
+namespace Looseloop.Statistics.Tests;
 
-public class DistributionsTests
+public class DistributionTests
 {
     // GUM (JCGM 100:2008) table G.2, from memory; printed to two decimals.
     [Theory]
@@ -14,13 +14,13 @@ public class DistributionsTests
     [InlineData(0.99, 16, 2.92)]
     [InlineData(0.6827, 2, 1.32)]
     public void Coverage_factors_are_those_of_the_guide(double coverage, double freedom, double printed) =>
-        Assert.Equal(printed, Distributions.CoverageFactor(coverage, freedom), 0.0051);
+        Assert.Equal(printed, CoverageFactor.TwoSided(freedom, coverage), 0.0051);
 
     [Fact]
     public void Coverage_factor_without_end_is_the_normal_one() =>
-        Assert.Equal(1.959964, Distributions.CoverageFactor(0.95, double.PositiveInfinity), 1e-5);
+        Assert.Equal(1.959964, CoverageFactor.TwoSided(double.PositiveInfinity, 0.95), 1e-5);
 
-    // Oracle: MathNet.Numerics; 200 is where the method changes.
+    // Oracle: MathNet.Numerics.
     [Theory]
     [InlineData(0.95, 3)]
     [InlineData(0.95, 199.5)]
@@ -30,7 +30,7 @@ public class DistributionsTests
     public void Coverage_factors_agree_with_an_independent_library(double coverage, double freedom)
     {
         double expected = MathNet.Numerics.Distributions.StudentT.InvCDF(0, 1, freedom, (1 + coverage) / 2);
-        Assert.Equal(expected, Distributions.CoverageFactor(coverage, freedom), 2e-7);
+        Assert.Equal(expected, CoverageFactor.TwoSided(freedom, coverage), 2e-7);
     }
 
     // Oracle: MathNet.Numerics, an independent library.
@@ -42,6 +42,6 @@ public class DistributionsTests
     public void Tails_of_F_agree_with_an_independent_library(double f, double d1, double d2)
     {
         double expected = MathNet.Numerics.SpecialFunctions.BetaRegularized(d2 / 2, d1 / 2, d2 / (d2 + (d1 * f)));
-        Assert.Equal(1, Distributions.FisherAbove(f, d1, d2) / expected, 1e-8);
+        Assert.Equal(1, FisherF.UpperTail(f, d1, d2) / expected, 1e-8);
     }
 }
