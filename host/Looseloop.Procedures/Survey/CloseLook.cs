@@ -20,6 +20,8 @@ public static class CloseLook
     /// <summary>A sweep runs ahead of the ring: the settled maximum may lie some steps from where the survey saw it.</summary>
     private const int MostMoves = 2;
     private const double SigmasToFollow = 3;
+    private const double SigmasToMove = 2;
+    private const int Middle = 2;
 
     /// <summary>What the look found.</summary>
     /// <param name="High">The setting of the maximum, duty 1/2.</param>
@@ -69,6 +71,10 @@ public static class CloseLook
         }
 
         int best = Enumerable.Range(1, 3).MaxBy(i => powers[i].Value);
+
+        // A flat top does not wander with the noise.
+        double gain = powers[best].Value - powers[Middle].Value;
+        best = gain < SigmasToMove * Math.Sqrt(powers[best].Variance + powers[Middle].Variance) ? Middle : best;
         Power over = powers[best].Over(powers[0], powers[4]);
         Power overLow = powers[best + 5].Over(powers[5], powers[9]);
         double amplitude = Math.Sign(over.Value) * Math.Sqrt(Math.Abs(over.Value));

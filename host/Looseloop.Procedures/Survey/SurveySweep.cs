@@ -13,6 +13,9 @@ public static class SurveySweep
     /// <summary>A ring is given about this Q's time to build up: longer would cost seconds and show nothing more.</summary>
     private const double QToSettle = 300;
 
+    /// <summary>Nor is a slow detector waited for at every setting: it lags by a setting, which the close look follows.</summary>
+    private const double LongestForDetectorS = 1e-3;
+
     /// <summary>Default range, hertz.</summary>
     public const double LowHz = 30_000;
 
@@ -31,7 +34,7 @@ public static class SurveySweep
         foreach (IGrouping<int, Setting> octave in settings.GroupBy(setting => setting.DutyBits))
         {
             double centreHz = octave.First().FrequencyHz * Math.Sqrt(2);
-            int dwellUs = (int)(1e6 * ((QToSettle / (Math.PI * centreHz)) + (2 * law.TimeConstantS)));
+            int dwellUs = (int)(1e6 * ((QToSettle / (Math.PI * centreHz)) + Math.Min(2 * law.TimeConstantS, LongestForDetectorS)));
             var request = new SweepRequest([.. octave], dwellUs, Samples) { Pack = PointsPerLine };
             SweepResult result = box.Sweep(request, _ => watch.Progress((double)(points.Count + 1) / settings.Count), cancel);
             look = look.Samples == 0 ? result.Look : look;
