@@ -179,9 +179,9 @@ public sealed record MeasurePlan(
     private static NoiseLaw NoiseOf(TargetSearch.Result search, AmplitudeMaker maker)
     {
         double[] variances = [.. search.Points.Select(point => point.SampleVariance).Where(double.IsFinite).Order()];
-        double sigma = RoundedEstimate.Geometric(variances.Length == 0 ? 1 : Math.Max(Math.Sqrt(variances[variances.Length / 2]), 0.1), 1.5);
+        double sigma = RoundedEstimate.Geometric(variances.Length == 0 ? 1 : Math.Max(Math.Sqrt(variances[variances.Length / 2]), 0.1), 2);
         DetectorLaw law = maker.Scale.Law;
-        double peak = RoundedEstimate.Geometric(Math.Sqrt(search.Fit.PeakPower), 1.25);
+        double peak = RoundedEstimate.Geometric(Math.Sqrt(search.Fit.PeakPower), 2);
         double rawAtPeak = maker.Scale.Counts(peak);
         double amplitudeSigma = sigma * maker.Scale.Slope(rawAtPeak);
         return law.Kind switch

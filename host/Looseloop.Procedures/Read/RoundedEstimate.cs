@@ -10,7 +10,7 @@ public static class RoundedEstimate
 {
     private const double QStep = 1.08;
     private const double BandwidthPart = 1 / 12.0;
-    private const double PowerStep = 0.03;
+    private const double PowerStep = 0.05;
 
     /// <summary>Q to steps of 8 %, f0 to a twelfth of the bandwidth.</summary>
     public static Target Of(Target target)
@@ -20,7 +20,7 @@ public static class RoundedEstimate
         return target with { Q = q, F0Hz = Math.Round(target.F0Hz / stepHz) * stepHz };
     }
 
-    /// <summary>The rounded target's curve, its feed-through to 3 % of the peak's power.</summary>
+    /// <summary>The rounded target's curve, its feed-through to 5 % of the peak's power.</summary>
     public static CurveEstimate Of(Target rounded, ResonanceFit fit)
     {
         CurveEstimate estimate = CurveEstimate.From(fit);
