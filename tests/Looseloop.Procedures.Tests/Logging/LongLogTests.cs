@@ -4,6 +4,7 @@ using Looseloop.Procedures.Logging;
 using Looseloop.Procedures.Tests.Tracking;
 using Looseloop.Procedures.Tracking;
 using Looseloop.Readings;
+using Looseloop.Record;
 using Xunit.Abstractions;
 
 namespace Looseloop.Procedures.Tests.Logging;
@@ -26,7 +27,10 @@ public class LongLogTests(ITestOutputHelper output)
 
         World world = BenchTracking.World(0.05, 60, _warmUp);
         using var socket = new BenchSocket(world, 4, mishaps);
-        var sink = new MemorySink();
+        DirectoryInfo folder = Directory.CreateTempSubdirectory("long-log");
+        string file = Path.Combine(folder.FullName, "record.db");
+        using RecordStore store = RecordStore.Open(file, socket.Time.GetUtcNow());
+        var sink = new MemorySink(store);
         var watch = new TestWatch();
         var clock = Stopwatch.StartNew();
         LogSummary summary = LogRun.Run(socket, sink, watch, LogRun.Options(socket.Time, TimeSpan.FromHours(Hours), TimeSpan.FromSeconds(10)));
@@ -35,6 +39,10 @@ public class LongLogTests(ITestOutputHelper output)
         Assert.Equal(20, socket.Happened.Count(m => m.What != Mishap.Reset));
         Assert.Equal(5, socket.Happened.Count(m => m.What == Mishap.Reset));
         Assert.Equal(RunStatus.Completed, summary.Stop.Status);
+
+        store.Dispose();
+        AssertRecorded(file, sink);
+        folder.Delete(recursive: true);
 
         // Every reading that was told is in the sink, once, and the stop counts them.
         Assert.Equal(sink.Readings.Select(reading => reading.Id), watch.Told);
@@ -84,6 +92,23 @@ public class LongLogTests(ITestOutputHelper output)
         Assert.True(qRatio.Average(r => r > 1 ? 1.0 : 0) < 0.06);
         Assert.True(sink.Readings.Count > 0.9 * Hours * 360);
     }
+
+    /// <summary>The record has what the log gave it: readings in their order, events, stop; and it is intact.</summary>
+    private static void AssertRecorded(string file, MemorySink sink)
+    {
+        using RecordReader reader = RecordReader.Open(file);
+        Assert.Empty(reader.CheckIntegrity());
+        long run = Assert.Single(reader.RunNumbers(new HistoryQuery()));
+        Assert.Equal(sink.Readings.Select(reading => reading.Id), reader.AllReadingsOf(run).Select(number => reader.Figures(number).Id));
+        RunDocument document = reader.Run(run);
+        Assert.Equal(
+            sink.Events.Select(e => (e.Id, e.Kind, Microseconds(e.From), Microseconds(e.To))),
+            document.Events.Select(e => (e.Id, e.Kind, Microseconds(e.From), Microseconds(e.To))));
+        Assert.Equal((sink.Stop!.Status, sink.Stop.Count), (document.Stop!.Status, document.Stop.Count));
+    }
+
+    // The record keeps times to the microsecond.
+    private static long? Microseconds(DateTimeOffset? time) => time?.UtcTicks / TimeSpan.TicksPerMicrosecond;
 
     private static double MiddleS(Reading reading) => reading.MonotonicS - (TrackedReading.Is(reading) ? 0.07 : 2);
 }

@@ -2,8 +2,8 @@ using Looseloop.Readings;
 
 namespace Looseloop.Procedures.Tests.Logging;
 
-/// <summary>Keeps the documents of a run in memory, in the order they came.</summary>
-internal sealed class MemorySink : IRunSink
+/// <summary>Keeps the documents of a run in memory, in the order they came, once the record behind it (if any) has them.</summary>
+internal sealed class MemorySink(IRunSink? record = null) : IRunSink
 {
     public RunStart? Start { get; private set; }
 
@@ -16,6 +16,7 @@ internal sealed class MemorySink : IRunSink
     public void Append(RunStart document)
     {
         Assert.Null(Start);
+        record?.Append(document);
         Start = document;
     }
 
@@ -23,6 +24,7 @@ internal sealed class MemorySink : IRunSink
     {
         Assert.Equal(Start!.Id, runId);
         Assert.Null(Stop);
+        record?.Append(runId, reading);
         Readings.Add(reading);
     }
 
@@ -30,10 +32,15 @@ internal sealed class MemorySink : IRunSink
     {
         Assert.Equal(Start!.Id, document.RunId);
         Assert.Null(Stop);
+        record?.Append(document);
         Events.Add(document);
     }
 
-    public void Append(RunStop document) => Stop = document;
+    public void Append(RunStop document)
+    {
+        record?.Append(document);
+        Stop = document;
+    }
 
     public IEnumerable<RunEvent> Of(RunEventKind kind) => Events.Where(e => e.Kind == kind);
 }
