@@ -1,4 +1,5 @@
 using Microsoft.Data.Sqlite;
+using SQLitePCL;
 
 namespace Looseloop.Record;
 
@@ -24,6 +25,13 @@ internal static class RecordFile
             SqliteConnection connection = Connect(Address(path), SqliteOpenMode.ReadWriteCreate);
             try
             {
+                // SQLite opens a file that may not be written for reading, and says nothing until the first write.
+                if (raw.sqlite3_db_readonly(connection.Handle, "main") == 1)
+                {
+                    throw new RecordException(
+                        RecordProblem.NoPermission, $"The record {path} may not be written. It was left as it is. Check its permissions, or name another file with --record.");
+                }
+
                 // Looked at before the first write: a record that this program must not touch stays as it is, to the byte.
                 int version = Migrations.Check(connection, path);
                 Execute(connection, "PRAGMA journal_mode = WAL; PRAGMA synchronous = FULL; PRAGMA foreign_keys = ON; PRAGMA wal_autocheckpoint = 4000;");
