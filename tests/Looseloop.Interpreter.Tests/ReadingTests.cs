@@ -39,6 +39,6 @@ public class ReadingTests(ITestOutputHelper output)
         Assert.InRange(reading.F0Hz - CircuitHz, -3 * reading.Budget.F0Hz(false), 3 * reading.Budget.F0Hz(false));
         double qInterval = 3 * reading.Budget.QRelative(false) * reading.Q;
         Assert.InRange(reading.Q - CircuitQ, -qInterval, qInterval);
-        Assert.False(board.IsDriving);
+        board.WaitForDrive(false, 5); // the trace of the pin comes by another way than the lines
     }
 }
